@@ -1,0 +1,195 @@
+//! The whole calculation of one joint, from a [`Joint`] to a [`Report`].
+
+use crate::model::{Basis, Confirmation, Joint, Vector, Wrench};
+use crate::solvers::{Elastic, NotSolved, Ultimate};
+
+/// Properties of the welds treated as lines, weighted by throat.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Section {
+    /// Length of weld (both sides of double-sided welds), mm.
+    pub length: f64,
+    /// Throat area, mm^2.
+    pub throat_area: f64,
+    /// Centroid, mm.
+    pub centroid: Vector,
+    /// Integral of throat y^2 about the centroid, mm^4.
+    pub i_x: f64,
+    /// Integral of throat x^2 about the centroid, mm^4.
+    pub i_y: f64,
+    /// Integral of throat x y about the centroid, mm^4.
+    pub i_xy: f64,
+    /// Polar: i_x + i_y, mm^4.
+    pub j: f64,
+}
+
+/// Whether a case holds.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Status {
+    /// Every verification satisfied.
+    Satisfied,
+    /// Some verification exceeded.
+    Exceeded,
+    /// No answer.
+    NotSolved,
+}
+
+/// One verification.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Check {
+    /// Identifier, for example `instantaneous-centre`.
+    pub id: String,
+    /// The analysis it rests on.
+    pub basis: Basis,
+    /// Clause.
+    pub clause: String,
+    /// What is checked, in words.
+    pub subject: String,
+    /// Nominal load factor: multiplies the given load to reach the nominal strength.
+    pub load_factor: f64,
+    /// Load factor to the design strength.
+    pub design_load_factor: f64,
+    /// Size of the given load: resultant force, N, or moment about the centroid, N mm, where there is no force.
+    pub demand: f64,
+    /// Design strength in the same unit.
+    pub resistance: f64,
+    /// True when demand and resistance are moments.
+    pub in_moment: bool,
+    /// 1 / `design_load_factor`.
+    pub utilisation: f64,
+    /// Relative error estimate of the load factor.
+    pub error_estimate: f64,
+    /// Whether it is satisfied, error estimate included.
+    pub satisfied: bool,
+    /// Whether the code accepts it as the verification; information only otherwise.
+    pub accepted: bool,
+    /// Whether the numbers of the rule set were read or recalled.
+    pub values: Confirmation,
+}
+
+/// The verification that decides a case.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Verification {
+    /// Basis.
+    pub basis: Basis,
+    /// Identifier of the governing row of `checks`.
+    pub check: String,
+    /// Utilisation.
+    pub utilisation: f64,
+}
+
+/// Forces on one element (reporting cell) of the weld at the given load, about the weld centroid.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct CellForce {
+    /// Force, N.
+    pub force: Vector,
+    /// Moment about the weld centroid, N mm.
+    pub moment: Vector,
+    /// Force per length at the middle (all sides), N/mm.
+    pub force_per_length: f64,
+}
+
+/// One row of the element table.
+#[derive(Debug, Clone, PartialEq)]
+pub struct ElementRow {
+    /// Index of the weld.
+    pub weld: usize,
+    /// Number of the element in its weld, from 1.
+    pub element: usize,
+    /// Middle of the element, mm.
+    pub at: Vector,
+    /// Length, mm.
+    pub length: f64,
+    /// Angle between displacement and weld axis at the middle, rad.
+    pub angle: Option<f64>,
+    /// Displacement at first rupture, mm.
+    pub deformation: Option<f64>,
+    /// Displacement over its rupture limit.
+    pub deformation_ratio: Option<f64>,
+    /// Ultimate method, at the given load; `None` where that analysis has no answer.
+    pub ultimate: Option<CellForce>,
+    /// Elastic method, at the given load.
+    pub elastic: CellForce,
+    /// Elastic stress over strength, as a share of its peak over the group.
+    pub elastic_ratio: f64,
+}
+
+/// The analyses of one load case.
+#[derive(Debug, Clone, PartialEq)]
+pub enum Analyses {
+    /// The load is zero: nothing to resist.
+    Unloaded,
+    /// The load was analysed.
+    Loaded {
+        /// Instantaneous-centre method.
+        ultimate: Result<Ultimate, NotSolved>,
+        /// Elastic vector method.
+        elastic: Elastic,
+    },
+}
+
+/// Everything about one load case.
+#[derive(Debug, Clone, PartialEq)]
+pub struct CaseReport {
+    /// Name of the case or combination.
+    pub name: String,
+    /// The given load about the weld centroid.
+    pub load: Wrench,
+    /// Whether it holds.
+    pub status: Status,
+    /// What decides it; `None` when not solved.
+    pub verification: Option<Verification>,
+    /// The analyses.
+    pub analyses: Analyses,
+    /// All verifications, the governing one first.
+    pub checks: Vec<Check>,
+    /// Element table.
+    pub elements: Vec<ElementRow>,
+}
+
+/// How grave a finding is.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
+pub enum Grade {
+    /// A rule is broken.
+    Breach,
+    /// Something a responsible engineer must weigh.
+    Caution,
+    /// Something good to know.
+    Note,
+}
+
+/// An engineering remark.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct Finding {
+    /// How grave.
+    pub grade: Grade,
+    /// Clause or origin; empty when none.
+    pub clause: String,
+    /// What it concerns.
+    pub subject: String,
+    /// One or two sentences.
+    pub message: String,
+}
+
+/// The dimensionless result where one size and filler serve all welds.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Coefficients {
+    /// Ultimate resultant over `longitudinal strength x length of weld`.
+    pub mean_strength: f64,
+    /// Handbook coefficient C = R_n / (D l), l the longest run, D in sixteenths of an inch, E70: kip/in.
+    pub handbook: f64,
+}
+
+/// Everything about one joint.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Report {
+    /// The joint as given.
+    pub joint: Joint,
+    /// Line properties.
+    pub section: Section,
+    /// Results by case.
+    pub cases: Vec<CaseReport>,
+    /// Index of the governing case; `None` when some case has no answer.
+    pub governing: Option<usize>,
+    /// Remarks.
+    pub findings: Vec<Finding>,
+}

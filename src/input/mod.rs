@@ -1,0 +1,1 @@
+//! Joint file to model.

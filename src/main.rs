@@ -1,0 +1,2 @@
+//! weldpole command line.
+fn main() {}

@@ -1,0 +1,1 @@
+//! What a given motion produces.
