@@ -1,1 +1,15 @@
-//! What a given motion produces.
+//! What a given motion produces: line properties, displacements, strength, resultant, rupture.
+
+pub mod law;
+mod panels;
+mod plane;
+mod resultant;
+mod rupture;
+mod section;
+mod table_law;
+
+pub use panels::Quadrature;
+pub use plane::{Piece, PlaneGroup, PointElement, Shape, Triple, along_and_across, cell_count, displacement};
+pub use resultant::Resultant;
+pub use rupture::Utmost;
+pub use section::Section;

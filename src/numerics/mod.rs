@@ -1,1 +1,7 @@
-//! Pure mathematics.
+//! Pure mathematics, with no weld in sight: quadrature, roots and maxima of one variable, the sphere.
+
+mod gauss;
+mod roots;
+
+pub use gauss::GaussLegendre;
+pub use roots::{maximise, root};

@@ -1,0 +1,166 @@
+//! How near a motion is to the rupture of the first point of the weld.
+//!
+//! `g(q) = max over the weld of |u| / Delta_u(theta)`; the group ruptures at g = 1, and g is homogeneous of
+//! degree one, so `q / g(q)` is the motion at rupture in the direction of q.
+//!
+//! | symbol | code | unit | meaning |
+//! |---|---|---|---|
+//! | g | `Utmost::ratio` | - | largest deformation ratio |
+//! | dg/dq | `Utmost::gradient` | 1/mm | at fixed place (exact for a smooth maximum) |
+//!
+//! On a straight run |u| and theta both grow away from the foot, so where Delta_u falls with theta the
+//! maximum lies at an end. On arcs, and for a user's curve whose limit grows with theta, it is searched: ends,
+//! smooth interior maxima between samples, and on arcs the points where `u_t = 0` (there theta = 90 degrees is
+//! a ridge; the place moves with q so that u_t stays zero, and the gradient follows it).
+//! For a law without limit `g = |q|`, a mere normalisation.
+
+use super::law::rupture_limit;
+use super::plane::{Piece, PlaneGroup, Shape, Triple, along_and_across, displacement};
+use crate::numerics::maximise;
+use nalgebra::Vector2;
+use std::f64::consts::{FRAC_PI_2, PI};
+
+/// The point nearest to rupture under a motion.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Utmost {
+    /// Deformation over its limit.
+    pub ratio: f64,
+    /// Derivative by the motion.
+    pub gradient: Triple,
+    /// Index of the piece.
+    pub piece: usize,
+    /// Scaled position.
+    pub at: Vector2<f64>,
+    /// Angle between displacement and weld axis, rad.
+    pub angle: f64,
+    /// Displacement, mm.
+    pub deformation: f64,
+}
+
+/// Samples along a piece on which interior maxima are searched.
+const SAMPLES: u8 = 32;
+
+impl PlaneGroup {
+    /// The point of the group nearest to rupture under the motion `q`; `None` when nothing moves.
+    ///
+    /// For a law without limit the ratio is the size of the motion and the place is the point that moves most.
+    #[must_use]
+    pub fn utmost(&self, q: &Triple) -> Option<Utmost> {
+        let mut best: Option<Utmost> = None;
+        let mut offer = |candidate: Option<Utmost>| {
+            if let Some(candidate) = candidate
+                && best.is_none_or(|known| candidate.ratio > known.ratio)
+            {
+                best = Some(candidate);
+            }
+        };
+        if self.elements.is_empty() {
+            for (index, piece) in self.pieces.iter().enumerate() {
+                let (low, high) = piece.range();
+                offer(self.at_parameter(q, index, piece, low));
+                offer(self.at_parameter(q, index, piece, high));
+                if let Shape::Arc { .. } = piece.shape {
+                    self.inside(q, index, piece, &mut offer);
+                    self.transverse_points(q, index, piece, &mut offer);
+                } else if !self.ruptures_at_ends {
+                    self.inside(q, index, piece, &mut offer);
+                }
+            }
+        } else {
+            for element in &self.elements {
+                offer(self.at_point(q, element.piece, element.at, &element.tangent, element.size));
+            }
+        }
+        let mut utmost = best?;
+        if rupture_limit(&self.law, 0.0).is_none() {
+            let size = q.norm();
+            utmost.ratio = size;
+            utmost.gradient = q / size;
+        }
+        utmost.ratio.is_normal().then_some(utmost)
+    }
+
+    fn at_parameter(&self, q: &Triple, index: usize, piece: &Piece, parameter: f64) -> Option<Utmost> {
+        self.at_point(q, index, piece.position(parameter), &piece.tangent(parameter), piece.size)
+    }
+
+    fn at_point(
+        &self,
+        q: &Triple,
+        piece: usize,
+        at: Vector2<f64>,
+        tangent: &Vector2<f64>,
+        size: f64,
+    ) -> Option<Utmost> {
+        let u = displacement(q, &at);
+        let deformation = u.norm();
+        if deformation <= f64::MIN_POSITIVE {
+            return None;
+        }
+        let (along, across) = along_and_across(&u, tangent);
+        let angle = across.abs().atan2(along.abs());
+        let (limit, limit_slope) = rupture_limit(&self.law, angle).unwrap_or((1.0, 0.0));
+        let ratio = deformation / (size * limit);
+        // d theta / du = sigma n / |u|, n the normal of u.
+        let sigma = if (along >= 0.0) == (across >= 0.0) { 1.0 } else { -1.0 };
+        let e = u / deformation;
+        let by_u = e * (ratio / deformation)
+            - Vector2::new(-e.y, e.x) * (ratio * limit_slope / limit * sigma / deformation);
+        let gradient = Triple::new(by_u.x, by_u.y, at.x * by_u.y - at.y * by_u.x);
+        Some(Utmost { ratio, gradient, piece, at, angle, deformation })
+    }
+
+    /// Offers the smooth maxima inside a piece.
+    fn inside(&self, q: &Triple, index: usize, piece: &Piece, offer: &mut impl FnMut(Option<Utmost>)) {
+        let (low, high) = piece.range();
+        let step = (high - low) / f64::from(SAMPLES);
+        let ratio =
+            |parameter: f64| self.at_parameter(q, index, piece, parameter).map_or(0.0, |utmost| utmost.ratio);
+        let values: Vec<f64> = (0..=SAMPLES).map(|k| ratio(low + step * f64::from(k))).collect();
+        for (k, window) in (1..SAMPLES).zip(values.windows(3)) {
+            if window[1] >= window[0] && window[1] >= window[2] {
+                let middle = low + step * f64::from(k);
+                let (place, _) = maximise(ratio, middle - step, middle + step);
+                offer(self.at_parameter(q, index, piece, place));
+            }
+        }
+    }
+
+    /// Offers the points of an arc where the displacement is square to it.
+    ///
+    /// With `u_c` the displacement of the arc's centre and `T = omega R`, `u_t = 0` where
+    /// `sin(phi - phi_c) = T / |u_c|`, and there `|u| = sqrt(|u_c|^2 - T^2)` whatever q does.
+    fn transverse_points(
+        &self,
+        q: &Triple,
+        index: usize,
+        piece: &Piece,
+        offer: &mut impl FnMut(Option<Utmost>),
+    ) {
+        let Shape::Arc { centre, radius, low, high } = piece.shape else { return };
+        let of_centre = displacement(q, &centre);
+        let (size, turning) = (of_centre.norm(), q.z * radius);
+        if turning.abs() >= size {
+            return;
+        }
+        let toward = of_centre.y.atan2(of_centre.x);
+        let lean = (turning / size).asin();
+        let deformation = (size * size - turning * turning).sqrt();
+        let (limit, _) = rupture_limit(&self.law, FRAC_PI_2).unwrap_or((1.0, 0.0));
+        let ratio = deformation / (piece.size * limit);
+        for angle in [toward + lean, toward + PI - lean] {
+            let phi = low + (angle - low).rem_euclid(2.0 * PI);
+            if phi >= high || deformation <= 1e-6 * size {
+                continue;
+            }
+            let by_centre = of_centre / deformation;
+            let gradient = Triple::new(
+                by_centre.x,
+                by_centre.y,
+                centre.x * by_centre.y - centre.y * by_centre.x - turning * radius / deformation,
+            ) / (piece.size * limit);
+            let at = piece.position(phi);
+            offer(Some(Utmost { ratio, gradient, piece: index, at, angle: FRAC_PI_2, deformation }));
+        }
+    }
+}
