@@ -3,24 +3,7 @@
 use crate::model::{Basis, Confirmation, Joint, Vector, Wrench};
 use crate::solvers::{Elastic, NotSolved, Ultimate};
 
-/// Properties of the welds treated as lines, weighted by throat.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub struct Section {
-    /// Length of weld (both sides of double-sided welds), mm.
-    pub length: f64,
-    /// Throat area, mm^2.
-    pub throat_area: f64,
-    /// Centroid, mm.
-    pub centroid: Vector,
-    /// Integral of throat y^2 about the centroid, mm^4.
-    pub i_x: f64,
-    /// Integral of throat x^2 about the centroid, mm^4.
-    pub i_y: f64,
-    /// Integral of throat x y about the centroid, mm^4.
-    pub i_xy: f64,
-    /// Polar: i_x + i_y, mm^4.
-    pub j: f64,
-}
+pub use crate::mechanics::Section;
 
 /// Whether a case holds.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]

@@ -1,0 +1,230 @@
+//! The equilibrium path from zero load to the rupture of the first element, and the largest load on it.
+//!
+//! With the load direction L fixed, `W(q) - lambda L = 0` is a curve in the four numbers (q, lambda). It is
+//! followed by pseudo-arclength continuation, so that load and deformation may both turn back:
+//!
+//! * tangent t: the null vector of `[K, -L]`, oriented along the way come;
+//! * predictor: one step along t;
+//! * corrector: Newton on `[K, -L; t^T]`, which keeps the length of the step.
+//!
+//! The path starts at a small deformation ratio (the tangent at zero is infinite) and ends where
+//! `g(q) = max |u| / Delta_u` reaches 1 for the first time. A maximum of lambda is where `t_lambda` changes
+//! sign; it is closed in on by root finding on the step length.
+//!
+//! | symbol | code | unit | meaning |
+//! |---|---|---|---|
+//! | g | `ratio` | - | largest deformation over its limit |
+//! | lambda | `load` | N | load along L |
+//! | t | `tangent` | - | direction of the path; q over a typical motion, lambda over a typical load |
+//!
+//! Source: E. Riks, J. Appl. Mech. 39 (1972) 1060 (continuation by arc length).
+
+use super::equilibrium::{NewtonSettings, newton};
+use crate::mechanics::{PlaneGroup, Quadrature, Triple};
+use crate::numerics::root;
+use nalgebra::{Matrix4, Vector4};
+
+/// How the path is followed.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct PathSettings {
+    /// Deformation ratio of the first point. Below it the load grows with the deformation for every law.
+    pub first_ratio: f64,
+    /// Longest step, in units of the motion and load at rupture: short against the scale of the curve's hump.
+    pub longest_step: f64,
+    /// Shortest step before the path is given up.
+    pub shortest_step: f64,
+    /// Most steps.
+    pub steps: usize,
+}
+
+impl Default for PathSettings {
+    fn default() -> Self {
+        Self { first_ratio: 0.02, longest_step: 0.08, shortest_step: 1e-6, steps: 2000 }
+    }
+}
+
+/// What was met on the path.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Path {
+    /// Largest load along the load direction, N.
+    pub peak: f64,
+    /// Motion at first rupture.
+    pub last: Triple,
+    /// Load at first rupture, N.
+    pub last_load: f64,
+}
+
+/// A point of the path: motion over a typical motion, load over a typical load.
+type Point = Vector4<f64>;
+
+struct Follower<'a> {
+    group: &'a PlaneGroup,
+    direction: Triple,
+    quadrature: Quadrature,
+    motion_scale: f64,
+    load_scale: f64,
+}
+
+/// Follows the path along the unit load `direction` from zero load to first rupture.
+///
+/// `typical` is a state at rupture (its motion and load): it scales the path and starts it. `None` when the
+/// path is lost.
+#[must_use]
+pub fn follow(
+    group: &PlaneGroup,
+    direction: &Triple,
+    typical: (&Triple, f64),
+    settings: &PathSettings,
+) -> Option<Path> {
+    let follower = Follower {
+        group,
+        direction: *direction,
+        quadrature: Quadrature::fine(6),
+        motion_scale: typical.0.norm(),
+        load_scale: typical.1,
+    };
+    follower.run(typical.0, settings)
+}
+
+impl Follower<'_> {
+    fn run(&self, typical: &Triple, settings: &PathSettings) -> Option<Path> {
+        let mut point = self.first(typical, settings.first_ratio)?;
+        let mut tangent = self.tangent(&point, None)?;
+        let mut peak = point.w;
+        let mut step = settings.first_ratio.min(settings.longest_step);
+        for _ in 0..settings.steps {
+            let Some(next) = self.corrected(&(point + tangent * step), &tangent) else {
+                step *= 0.5;
+                if step < settings.shortest_step {
+                    return None;
+                }
+                continue;
+            };
+            let next_tangent = self.tangent(&next, Some(&tangent))?;
+            if next_tangent.dot(&tangent) < MOST_BEND && step > settings.shortest_step {
+                step *= 0.5;
+                continue;
+            }
+            if self.ratio(&next) >= 1.0 {
+                return self.end(&point, &tangent, step, peak);
+            }
+            if tangent.w > 0.0 && next_tangent.w < 0.0 {
+                peak = peak.max(self.summit(&point, &tangent, step)?);
+            }
+            peak = peak.max(next.w);
+            (point, tangent) = (next, next_tangent);
+            step = (1.5 * step).min(settings.longest_step);
+        }
+        None
+    }
+
+    /// Closes in on first rupture within the last step.
+    fn end(&self, point: &Point, tangent: &Point, step: f64, peak: f64) -> Option<Path> {
+        let excess = |length: f64| {
+            self.corrected(&(point + tangent * length), tangent).map_or(f64::NAN, |at| self.ratio(&at) - 1.0)
+        };
+        let length = if excess(0.0) >= 0.0 { 0.0 } else { root(excess, 0.0, step)? };
+        let near = self.corrected(&(point + tangent * length), tangent)?;
+        let last_tangent = self.tangent(&near, Some(tangent))?;
+        let mut peak = peak.max(near.w);
+        if tangent.w > 0.0 && last_tangent.w < 0.0 {
+            peak = peak.max(self.summit(point, tangent, length)?);
+        }
+        let ending =
+            newton(self.group, &near.xyz(), &self.direction, &self.quadrature, &NewtonSettings::default())?;
+        ending.converged.then_some(Path {
+            peak: (peak * self.load_scale).max(ending.state.load),
+            last: ending.state.q,
+            last_load: ending.state.load,
+        })
+    }
+
+    /// The largest load between a point and the end of a step over which the load turns down.
+    fn summit(&self, point: &Point, tangent: &Point, step: f64) -> Option<f64> {
+        let slope = |length: f64| {
+            self.corrected(&(point + tangent * length), tangent)
+                .and_then(|at| self.tangent(&at, Some(tangent)))
+                .map_or(f64::NAN, |direction| direction.w)
+        };
+        let length = root(slope, 0.0, step)?;
+        self.corrected(&(point + tangent * length), tangent).map(|at| at.w)
+    }
+
+    /// The point of the path where the deformation ratio is `ratio`, by Newton on `g(q) = ratio`.
+    fn first(&self, typical: &Triple, ratio: f64) -> Option<Point> {
+        let mut q = typical * (ratio / self.group.utmost(typical)?.ratio);
+        let mut best = f64::INFINITY;
+        for _ in 0..60 {
+            let utmost = self.group.utmost(&q)?;
+            q *= ratio / utmost.ratio;
+            let resultant = self.group.resultant(&q, &self.quadrature);
+            let load = resultant.wrench.dot(&self.direction);
+            let gap = resultant.wrench - self.direction * load;
+            let unbalance = gap.norm() / resultant.wrench.norm();
+            if unbalance < 1e-11 && load > 0.0 {
+                let scaled = q / self.motion_scale;
+                return Some(Point::new(scaled.x, scaled.y, scaled.z, load / self.load_scale));
+            }
+            let matrix = self.matrix(&resultant.tangent, &utmost.gradient, 0.0);
+            let right = Vector4::new(-gap.x, -gap.y, -gap.z, 0.0) / self.load_scale;
+            let change = matrix.lu().solve(&right)?.xyz() * self.motion_scale;
+            let longest = if unbalance < best { 1.0 } else { 0.5 };
+            best = best.min(unbalance);
+            q += change * (longest * q.norm() / change.norm()).min(1.0);
+        }
+        None
+    }
+
+    /// `[K, -L; border]` in scaled unknowns and loads.
+    fn matrix(&self, tangent: &nalgebra::Matrix3<f64>, border: &Triple, last: f64) -> Matrix4<f64> {
+        let mut matrix = Matrix4::zeros();
+        matrix.fixed_view_mut::<3, 3>(0, 0).copy_from(&(tangent * (self.motion_scale / self.load_scale)));
+        matrix.fixed_view_mut::<3, 1>(0, 3).copy_from(&(-self.direction));
+        matrix.fixed_view_mut::<1, 3>(3, 0).copy_from(&border.transpose());
+        matrix[(3, 3)] = last;
+        matrix
+    }
+
+    /// Unit tangent of the path at a point: along the way come, or toward growing deformation at the start.
+    fn tangent(&self, at: &Point, before: Option<&Point>) -> Option<Point> {
+        let q = at.xyz() * self.motion_scale;
+        let resultant = self.group.resultant(&q, &self.quadrature);
+        let along = match before {
+            Some(before) => *before,
+            None => {
+                let gradient = self.group.utmost(&q)?.gradient.normalize();
+                Point::new(gradient.x, gradient.y, gradient.z, 0.0)
+            }
+        };
+        let matrix = self.matrix(&resultant.tangent, &along.xyz(), along.w);
+        let tangent = matrix.lu().solve(&Vector4::new(0.0, 0.0, 0.0, 1.0))?.normalize();
+        tangent.iter().all(|value| value.is_finite()).then_some(tangent)
+    }
+
+    /// Newton from a predicted point, square to the tangent.
+    fn corrected(&self, predicted: &Point, tangent: &Point) -> Option<Point> {
+        let mut point = *predicted;
+        for _ in 0..12 {
+            let resultant = self.group.resultant(&(point.xyz() * self.motion_scale), &self.quadrature);
+            let gap = resultant.wrench / self.load_scale - self.direction * point.w;
+            let slip = (point - predicted).dot(tangent);
+            if gap.norm() < 1e-11 && slip.abs() < 1e-11 {
+                return Some(point);
+            }
+            let matrix = self.matrix(&resultant.tangent, &tangent.xyz(), tangent.w);
+            let change = matrix.lu().solve(&Vector4::new(-gap.x, -gap.y, -gap.z, -slip))?;
+            if !change.iter().all(|value| value.is_finite()) || change.norm() > 1.0 {
+                return None;
+            }
+            point += change;
+        }
+        None
+    }
+
+    fn ratio(&self, at: &Point) -> f64 {
+        self.group.utmost(&(at.xyz() * self.motion_scale)).map_or(0.0, |utmost| utmost.ratio)
+    }
+}
+
+/// Least cosine between successive tangents: sharper bends are taken in shorter steps.
+const MOST_BEND: f64 = 0.9;
