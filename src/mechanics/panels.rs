@@ -62,6 +62,8 @@ struct Foot {
     /// Distances up to this are substituted by `z^power`.
     reach: f64,
     power: i32,
+    /// Cuts are graded up to this distance; on an arc the next foot takes over after a quarter turn.
+    span: f64,
 }
 
 /// Reusable storage for the cuts of one piece.
@@ -83,7 +85,7 @@ impl Panels {
                 let (along, across) = along_and_across(&displacement(q, &from), &tangent);
                 let foot = -across / q.z;
                 if foot.is_finite() {
-                    self.add_foot(group, foot, (along / q.z).abs(), high - low, quadrature);
+                    self.add_foot(group, (foot, (along / q.z).abs()), high - low, f64::INFINITY, quadrature);
                 }
             }
             Shape::Arc { centre, radius, .. } => {
@@ -105,14 +107,21 @@ impl Panels {
         self.cuts.dedup();
     }
 
-    fn add_foot(&mut self, group: &PlaneGroup, at: f64, scale: f64, range: f64, quadrature: &Quadrature) {
+    fn add_foot(
+        &mut self,
+        group: &PlaneGroup,
+        (at, scale): (f64, f64),
+        range: f64,
+        span: f64,
+        quadrature: &Quadrature,
+    ) {
         let on_the_weld = scale < ON_THE_WELD * range;
         let (reach, power) = match (on_the_weld, group.kink_levels.is_empty()) {
             (false, _) => (quadrature.first * scale, 2),
             (true, true) => (range / 3.0, 10),
             (true, false) => (1e-6 * range, 10),
         };
-        self.feet.push(Foot { at, scale, reach, power });
+        self.feet.push(Foot { at, scale, reach, power, span });
     }
 
     /// Feet of an arc: with `u_c` the displacement of its centre, `u_n = |u_c| cos(phi - phi_c)` and
@@ -134,7 +143,7 @@ impl Panels {
             for (foot, along) in [(toward + FRAC_PI_2, turning - size), (toward - FRAC_PI_2, turning + size)]
             {
                 for at in turns(foot, low - FRAC_PI_2, high + FRAC_PI_2) {
-                    self.add_foot(group, at, (along / size).abs(), high - low, quadrature);
+                    self.add_foot(group, (at, (along / size).abs()), high - low, FRAC_PI_2, quadrature);
                 }
             }
             let sine = turning / size;
@@ -156,7 +165,7 @@ impl Panels {
     /// Graded cuts around every foot.
     fn grade(&mut self, low: f64, high: f64, quadrature: &Quadrature) {
         for index in 0..self.feet.len() {
-            let Foot { at, reach, .. } = self.feet[index];
+            let Foot { at, reach, span, .. } = self.feet[index];
             if at > low && at < high {
                 self.cuts.push(at);
             }
@@ -164,6 +173,7 @@ impl Panels {
                 continue;
             }
             for (nearest, farthest, sign) in [(low - at, high - at, 1.0), (at - high, at - low, -1.0)] {
+                let farthest = farthest.min(span);
                 if farthest <= reach {
                     continue;
                 }
@@ -183,8 +193,9 @@ impl Panels {
     /// Cuts where the law has a kink in deformation or angle.
     fn add_kinks(&mut self, group: &PlaneGroup, piece: &Piece, q: &Triple) {
         let local = |parameter: f64| {
-            let u = displacement(q, &piece.position(parameter));
-            let (along, across) = along_and_across(&u, &piece.tangent(parameter));
+            let (at, tangent) = piece.frame(parameter);
+            let u = displacement(q, &at);
+            let (along, across) = along_and_across(&u, &tangent);
             (across.abs().atan2(along.abs()), u.norm() / piece.size)
         };
         let level = |parameter: f64| {
@@ -231,11 +242,6 @@ impl Panels {
                 }
             }
         }
-    }
-
-    /// The cuts, from the start to the end of the piece.
-    pub(super) fn cuts(&self) -> &[f64] {
-        &self.cuts
     }
 }
 

@@ -194,23 +194,15 @@ impl Piece {
         }
     }
 
-    /// Scaled position at a parameter.
+    /// Scaled position, and unit vector along the weld axis, at a parameter.
     #[must_use]
-    pub fn position(&self, parameter: f64) -> Vector2<f64> {
+    pub fn frame(&self, parameter: f64) -> (Vector2<f64>, Vector2<f64>) {
         match self.shape {
-            Shape::Straight { from, tangent, .. } => from + tangent * parameter,
+            Shape::Straight { from, tangent, .. } => (from + tangent * parameter, tangent),
             Shape::Arc { centre, radius, .. } => {
-                centre + Vector2::new(parameter.cos(), parameter.sin()) * radius
+                let (sine, cosine) = parameter.sin_cos();
+                (centre + Vector2::new(cosine, sine) * radius, Vector2::new(-sine, cosine))
             }
-        }
-    }
-
-    /// Unit vector along the weld axis at a parameter.
-    #[must_use]
-    pub fn tangent(&self, parameter: f64) -> Vector2<f64> {
-        match self.shape {
-            Shape::Straight { tangent, .. } => tangent,
-            Shape::Arc { .. } => Vector2::new(-parameter.sin(), parameter.cos()),
         }
     }
 

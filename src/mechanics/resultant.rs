@@ -45,8 +45,8 @@ impl PlaneGroup {
             panels.cut(self, piece, q, quadrature);
             let strength = piece.strength * piece.stretch();
             panels.visit(&quadrature.rule, |parameter, weight| {
-                let tangent = piece.tangent(parameter);
-                sum.add(self, q, &piece.position(parameter), &tangent, strength * weight, piece.size);
+                let (at, tangent) = piece.frame(parameter);
+                sum.add(self, q, &at, &tangent, strength * weight, piece.size);
             });
         }
         sum

@@ -38,7 +38,10 @@ pub struct Utmost {
 }
 
 /// Samples along a piece on which interior maxima are searched.
-const SAMPLES: u8 = 32;
+const SAMPLES: u8 = 24;
+/// A sampled maximum is closed in on from this share of the largest sample: between samples of a quarter turn
+/// over 6 the ratio rises by a few percent at most.
+const NEARLY_THE_LARGEST: f64 = 0.9;
 
 impl PlaneGroup {
     /// The point of the group nearest to rupture under the motion `q`; `None` when nothing moves.
@@ -81,7 +84,8 @@ impl PlaneGroup {
     }
 
     fn at_parameter(&self, q: &Triple, index: usize, piece: &Piece, parameter: f64) -> Option<Utmost> {
-        self.at_point(q, index, piece.position(parameter), &piece.tangent(parameter), piece.size)
+        let (at, tangent) = piece.frame(parameter);
+        self.at_point(q, index, at, &tangent, piece.size)
     }
 
     fn at_point(
@@ -116,11 +120,18 @@ impl PlaneGroup {
         let step = (high - low) / f64::from(SAMPLES);
         let ratio =
             |parameter: f64| self.at_parameter(q, index, piece, parameter).map_or(0.0, |utmost| utmost.ratio);
-        let values: Vec<f64> = (0..=SAMPLES).map(|k| ratio(low + step * f64::from(k))).collect();
-        for (k, window) in (1..SAMPLES).zip(values.windows(3)) {
-            if window[1] >= window[0] && window[1] >= window[2] {
+        let mut values = [0.0; SAMPLES as usize + 1];
+        for (k, value) in (0..=SAMPLES).zip(&mut values) {
+            *value = ratio(low + step * f64::from(k));
+        }
+        let worth_a_look = NEARLY_THE_LARGEST * values.iter().copied().fold(0.0, f64::max);
+        for k in 0..=SAMPLES {
+            let here = usize::from(k);
+            let before = if k == 0 { 0.0 } else { values[here - 1] };
+            let after = values.get(here + 1).copied().unwrap_or(0.0);
+            if values[here] >= before.max(after).max(worth_a_look) {
                 let middle = low + step * f64::from(k);
-                let (place, _) = maximise(ratio, middle - step, middle + step);
+                let (place, _) = maximise(ratio, (middle - step).max(low), (middle + step).min(high));
                 offer(self.at_parameter(q, index, piece, place));
             }
         }
@@ -159,7 +170,7 @@ impl PlaneGroup {
                 by_centre.y,
                 centre.x * by_centre.y - centre.y * by_centre.x - turning * radius / deformation,
             ) / (piece.size * limit);
-            let at = piece.position(phi);
+            let (at, _) = piece.frame(phi);
             offer(Some(Utmost { ratio, gradient, piece: index, at, angle: FRAC_PI_2, deformation }));
         }
     }

@@ -7,7 +7,8 @@
 //!
 //! Folds lie close to pure translations (the rupturing end changes as omega changes sign, and theta is small
 //! on whole runs), so the grid is graded in latitude toward `beta = 0` and in azimuth toward the directions of
-//! the runs. A cell is suspect when the map turns over in it: the Jacobian
+//! the runs; rotations about the centre of an arc, where theta is zero all along it, are ringed by samples of
+//! their own. A cell is suspect when the map turns over in it: the Jacobian
 //! `det [K, -W/|W|; (dg/dq)^T, 0]` is negative at a corner or on either side of a change of the rupturing
 //! point along an edge, or a triangle of images is turned over. Suspect cells are quartered repeatedly.
 //!
@@ -19,10 +20,12 @@
 //! | beta | `latitude` | rad | share of rotation in the motion |
 //! | W | `image` | - | unit wrench at rupture |
 //!
-//! Completeness is a matter of resolution: it is held against dense meshes in the tests, not proven.
+//! A map of degree one covers every load once more with its orientation kept than turned over, so the signs of
+//! all states sum to one: a search that ends otherwise has missed some, and is repeated from a wider net.
+//! Beyond that, completeness is a matter of resolution: held against dense meshes in the tests, not proven.
 
 use super::equilibrium::orientation;
-use crate::mechanics::{PlaneGroup, Quadrature, Triple};
+use crate::mechanics::{PlaneGroup, Quadrature, Shape, Triple};
 use nalgebra::{Matrix3, Vector2};
 use std::f64::consts::{PI, TAU};
 
@@ -34,6 +37,8 @@ pub struct AtlasSettings {
     /// Distances from the direction of a run at which azimuths are added, degrees: the rupture limit is capped
     /// up to 11.4 degrees, and the deformation at peak strength varies fastest below 3.
     pub around_runs: Vec<f64>,
+    /// Distances from a rotation about the centre of an arc at which it is ringed by samples, degrees.
+    pub around_arcs: Vec<f64>,
     /// Latitudes, degrees, from 0 to 90.
     pub latitudes: Vec<f64>,
     /// How often a suspect cell is quartered.
@@ -50,6 +55,7 @@ impl Default for AtlasSettings {
         Self {
             widest_azimuth: 4.0,
             around_runs: vec![0.0, 1.5, 3.0, 6.0, 11.4],
+            around_arcs: vec![0.0, 0.2, 0.6, 1.5, 4.0, 9.0],
             latitudes: vec![
                 0.0, 0.03, 0.3, 0.7, 1.3, 2.0, 3.0, 4.5, 6.5, 9.0, 12.0, 16.0, 21.0, 27.0, 34.0, 42.0, 51.0,
                 61.0, 72.0, 81.0, 90.0,
@@ -66,8 +72,8 @@ impl Default for AtlasSettings {
 struct Sample {
     motion: Triple,
     image: Triple,
-    /// Sign of the Jacobian: the map keeps (+) or turns over (-) orientation here.
-    keeps: bool,
+    /// Whether the map keeps orientation here; `None` for a pure translation, where the Jacobian jumps.
+    keeps: Option<bool>,
     /// What ruptures: piece and place.
     branch: (usize, Vector2<f64>),
 }
@@ -89,6 +95,7 @@ pub struct Atlas {
     patches: Vec<Patch>,
     margin: f64,
     suspects: usize,
+    folded: bool,
 }
 
 impl Atlas {
@@ -102,7 +109,13 @@ impl Atlas {
     /// Whether the map folds somewhere: only then can a load have several states.
     #[must_use]
     pub fn folds(&self) -> bool {
-        self.suspects > 0
+        self.folded
+    }
+
+    /// Number of suspect cells.
+    #[must_use]
+    pub fn suspects(&self) -> usize {
+        self.suspects
     }
 
     /// Number of triangles.
@@ -120,6 +133,24 @@ impl Atlas {
             if cosine.abs() >= patch.nearness {
                 let sign = cosine.signum();
                 patch.hits(&(direction * sign), self.margin, |start| starts.push(start * sign));
+            }
+        }
+        starts
+    }
+
+    /// Every corner and middle of every triangle near the load: a wider net, for when the states found cannot
+    /// be all.
+    #[must_use]
+    pub fn wide_starts(&self, direction: &Triple) -> Vec<Triple> {
+        let mut starts = Vec::new();
+        for patch in &self.patches {
+            let cosine = patch.middle.dot(direction);
+            if cosine.abs() >= patch.nearness {
+                let sum = patch.motions[0] + patch.motions[1] + patch.motions[2];
+                starts.push(sum.normalize() * cosine.signum());
+                starts.extend(
+                    patch.motions.iter().map(|motion| (motion * 3.0 + sum).normalize() * cosine.signum()),
+                );
             }
         }
         starts
@@ -169,6 +200,9 @@ impl Patch {
     }
 }
 
+/// Coordinates of a grid to a unit motion.
+type Chart<'a> = dyn Fn(f64, f64) -> Triple + 'a;
+
 struct Surveyor<'a> {
     group: &'a PlaneGroup,
     quadrature: Quadrature,
@@ -177,41 +211,70 @@ struct Surveyor<'a> {
 
 impl Surveyor<'_> {
     fn survey(&self) -> Atlas {
-        let azimuths = self.azimuths();
+        let mut atlas =
+            Atlas { patches: Vec::new(), margin: self.settings.margin, suspects: 0, folded: false };
         let latitudes: Vec<f64> =
             self.settings.latitudes.iter().map(|degrees| degrees.to_radians()).collect();
-        let mut atlas = Atlas { patches: Vec::new(), margin: self.settings.margin, suspects: 0 };
-        let column = |azimuth: f64| -> Vec<Option<Sample>> {
-            latitudes.iter().map(|latitude| self.sample(azimuth, *latitude)).collect()
+        let globe = |azimuth: f64, latitude: f64| {
+            let (sine, cosine) = latitude.sin_cos();
+            Triple::new(cosine * azimuth.cos(), cosine * azimuth.sin(), sine)
         };
-        let first = column(azimuths[0]);
+        self.chart(&mut atlas, &globe, &self.azimuths(), &latitudes);
+        let radii: Vec<f64> = self.settings.around_arcs.iter().map(|degrees| degrees.to_radians()).collect();
+        let turn: Vec<f64> = (0..=FAN).map(|part| TAU * f64::from(part) / f64::from(FAN)).collect();
+        for about in self.arc_centres() {
+            let first = about.cross(&Triple::x()).normalize();
+            let second = about.cross(&first);
+            let fan = |angle: f64, radius: f64| {
+                (about + (first * angle.cos() + second * angle.sin()) * radius.tan()).normalize()
+            };
+            self.chart(&mut atlas, &fan, &turn, &radii);
+        }
+        atlas
+    }
+
+    /// Charts every cell of a grid of the sphere; the last column closes on the first.
+    fn chart(&self, atlas: &mut Atlas, chart: &Chart, columns: &[f64], rows: &[f64]) {
+        let column =
+            |x: f64| -> Vec<Option<Sample>> { rows.iter().map(|y| self.sample(&chart(x, *y))).collect() };
+        let first = column(columns[0]);
         let mut left = first.clone();
-        for (index, pair) in azimuths.windows(2).enumerate() {
-            let last = index + 2 == azimuths.len();
+        for (index, pair) in columns.windows(2).enumerate() {
+            let last = index + 2 == columns.len();
             let right = if last { first.clone() } else { column(pair[1]) };
-            for row in 0..latitudes.len() - 1 {
+            for row in 0..rows.len() - 1 {
                 if let (Some(a), Some(b), Some(c), Some(d)) =
                     (left[row], right[row], right[row + 1], left[row + 1])
                 {
-                    let cell = [(pair[0], latitudes[row]), (pair[1], latitudes[row + 1])];
-                    self.chart(&mut atlas, cell, [a, b, c, d], self.settings.depth);
+                    let cell = [(pair[0], rows[row]), (pair[1], rows[row + 1])];
+                    self.cell(atlas, chart, cell, [a, b, c, d], self.settings.depth);
                 }
             }
             left = right;
         }
-        atlas
+    }
+
+    /// Rotations about the centres of the arcs: theta is zero along the whole arc, so the map has a cone there.
+    fn arc_centres(&self) -> Vec<Triple> {
+        let mut motions: Vec<Triple> = Vec::new();
+        for piece in &self.group.pieces {
+            if let Shape::Arc { centre, .. } = piece.shape {
+                let motion = Triple::new(centre.y, -centre.x, 1.0).normalize();
+                if motions.len() < self.settings.graded_runs
+                    && motions.iter().all(|known| (known - motion).norm() > 1e-6)
+                {
+                    motions.push(motion);
+                }
+            }
+        }
+        motions
     }
 
     /// Azimuths from 0 to a full turn: graded toward the directions of the straight runs, no gap too wide.
     fn azimuths(&self) -> Vec<f64> {
         let mut directions: Vec<f64> = Vec::new();
         for piece in &self.group.pieces {
-            let (low, high) = piece.range();
-            let mut tangents = vec![piece.tangent(low)];
-            if matches!(piece.shape, crate::mechanics::Shape::Arc { .. }) {
-                tangents.push(piece.tangent(high));
-            }
-            for tangent in tangents {
+            if let Shape::Straight { tangent, .. } = piece.shape {
                 let angle = tangent.y.atan2(tangent.x).rem_euclid(PI);
                 if directions.iter().all(|known| (known - angle).abs() > 1e-6) {
                     directions.push(angle);
@@ -247,16 +310,11 @@ impl Surveyor<'_> {
         filled
     }
 
-    fn sample(&self, azimuth: f64, latitude: f64) -> Option<Sample> {
-        let (sine, cosine) = latitude.sin_cos();
-        self.sample_motion(&Triple::new(cosine * azimuth.cos(), cosine * azimuth.sin(), sine))
-    }
-
-    fn sample_motion(&self, motion: &Triple) -> Option<Sample> {
+    fn sample(&self, motion: &Triple) -> Option<Sample> {
         let utmost = self.group.utmost(motion)?;
         let resultant = self.group.resultant(&(motion / utmost.ratio), &self.quadrature);
         let image = resultant.wrench.normalize();
-        let keeps = orientation(&resultant, &utmost) >= 0.0;
+        let keeps = (motion.z.abs() > 1e-12).then(|| orientation(&resultant, &utmost) >= 0.0);
         image.norm().is_finite().then_some(Sample {
             motion: *motion,
             image,
@@ -267,7 +325,7 @@ impl Surveyor<'_> {
 
     /// Adds a cell, given by two opposite corners and the samples at (lower left, lower right, upper right,
     /// upper left).
-    fn chart(&self, atlas: &mut Atlas, cell: [(f64, f64); 2], corners: [Sample; 4], depth: u8) {
+    fn cell(&self, atlas: &mut Atlas, chart: &Chart, cell: [(f64, f64); 2], corners: [Sample; 4], depth: u8) {
         let [a, b, c, d] = &corners;
         let suspect = self.suspect(&corners);
         if suspect && depth > 0 {
@@ -275,60 +333,82 @@ impl Surveyor<'_> {
             let (middle, centre) = (0.5 * (west + east), 0.5 * (south + north));
             let between =
                 [(middle, south), (east, centre), (middle, north), (west, centre), (middle, centre)];
-            let samples = between.map(|(azimuth, latitude)| self.sample(azimuth, latitude));
-            if let [Some(lower), Some(right), Some(upper), Some(left), Some(inner)] = samples {
+            if let [Some(lower), Some(right), Some(upper), Some(left), Some(inner)] =
+                between.map(|(x, y)| self.sample(&chart(x, y)))
+            {
                 let depth = depth - 1;
-                self.chart(atlas, [(west, south), (middle, centre)], [*a, lower, inner, left], depth);
-                self.chart(atlas, [(middle, south), (east, centre)], [lower, *b, right, inner], depth);
-                self.chart(atlas, [(middle, centre), (east, north)], [inner, right, *c, upper], depth);
-                self.chart(atlas, [(west, centre), (middle, north)], [left, inner, upper, *d], depth);
+                self.cell(atlas, chart, [(west, south), (middle, centre)], [*a, lower, inner, left], depth);
+                self.cell(atlas, chart, [(middle, south), (east, centre)], [lower, *b, right, inner], depth);
+                self.cell(atlas, chart, [(middle, centre), (east, north)], [inner, right, *c, upper], depth);
+                self.cell(atlas, chart, [(west, centre), (middle, north)], [left, inner, upper, *d], depth);
                 return;
             }
         }
         atlas.suspects += usize::from(suspect);
-        // A cell at the pole is a triangle.
-        let triangles =
-            if (c.motion - d.motion).norm() < 1e-12 { vec![[a, b, c]] } else { vec![[a, b, c], [a, c, d]] };
-        atlas.patches.extend(triangles.into_iter().map(|triangle| Patch::new(triangle, suspect)));
+        atlas.folded |= suspect || corners.iter().any(|corner| corner.keeps == Some(false));
+        // A cell at a pole is a triangle.
+        let same = |one: &Sample, two: &Sample| (one.motion - two.motion).norm() < 1e-12;
+        if !same(a, b) {
+            atlas.patches.push(Patch::new([a, b, c], suspect));
+        }
+        if !same(c, d) {
+            atlas.patches.push(Patch::new([a, c, d], suspect));
+        }
     }
 
-    /// Whether the map turns over in a cell.
+    /// Whether the map turns over within a cell: not all signs known of it agree.
     fn suspect(&self, corners: &[Sample; 4]) -> bool {
         let [a, b, c, d] = corners;
-        if corners.iter().any(|corner| !corner.keeps) || turned_over(a, b, c) || turned_over(a, c, d) {
+        let mut signs = corners.iter().filter_map(|corner| corner.keeps);
+        let Some(keeps) = signs.next() else { return true };
+        if signs.any(|other| other != keeps) {
             return true;
         }
-        [(a, b), (b, c), (c, d), (d, a)].into_iter().any(|(from, to)| self.turns_at_change(from, to))
+        let triangles = [(a, b, c), (a, c, d)];
+        if triangles
+            .iter()
+            .any(|(one, two, three)| keeps_order(one, two, three).is_some_and(|sign| sign != keeps))
+        {
+            return true;
+        }
+        [(a, b), (b, c), (c, d), (d, a)].into_iter().any(|(from, to)| self.turns_at_change(from, to, keeps))
     }
 
-    /// Whether the Jacobian is negative next to a change of the rupturing point between two samples.
-    fn turns_at_change(&self, from: &Sample, to: &Sample) -> bool {
-        if same_branch(from.branch, to.branch) {
+    /// Whether one point ruptures in both: the same end of a straight run, or the same arc.
+    fn same_branch(&self, one: (usize, Vector2<f64>), two: (usize, Vector2<f64>)) -> bool {
+        let arc = matches!(self.group.pieces[one.0].shape, Shape::Arc { .. });
+        one.0 == two.0 && (arc || (one.1 - two.1).norm() < 1e-6)
+    }
+
+    /// Whether the Jacobian has the other sign next to a change of the rupturing point between two samples.
+    fn turns_at_change(&self, from: &Sample, to: &Sample, keeps: bool) -> bool {
+        if self.same_branch(from.branch, to.branch) {
             return false;
         }
         let (mut near, mut far) = (from.motion, to.motion);
         for _ in 0..12 {
             let middle = (near + far).normalize();
             match self.group.utmost(&middle) {
-                Some(utmost) if same_branch((utmost.piece, utmost.at), from.branch) => near = middle,
+                Some(utmost) if self.same_branch((utmost.piece, utmost.at), from.branch) => near = middle,
                 Some(_) => far = middle,
                 None => return false,
             }
         }
-        [near, far].iter().any(|motion| self.sample_motion(motion).is_some_and(|sample| !sample.keeps))
+        [near, far]
+            .iter()
+            .any(|motion| self.sample(motion).is_some_and(|sample| sample.keeps == Some(!keeps)))
     }
 }
 
+/// Samples on a ring around a rotation about the centre of an arc.
+const FAN: u8 = 24;
 /// Azimuths closer than this are merged, rad.
 const CLOSEST_AZIMUTHS: f64 = 0.005;
 
-fn same_branch(one: (usize, Vector2<f64>), two: (usize, Vector2<f64>)) -> bool {
-    one.0 == two.0 && (one.1 - two.1).norm() < 0.1
-}
-
-fn turned_over(a: &Sample, b: &Sample, c: &Sample) -> bool {
+/// Whether the images of three samples keep the order of their motions; `None` for a degenerate triangle.
+fn keeps_order(a: &Sample, b: &Sample, c: &Sample) -> Option<bool> {
     let volume = |one: &Triple, two: &Triple, three: &Triple| one.dot(&two.cross(three));
     let before = volume(&a.motion, &b.motion, &c.motion);
     let after = volume(&a.image, &b.image, &c.image);
-    before * after < 0.0
+    (before.abs() > 1e-14).then_some((before > 0.0) == (after > 0.0))
 }

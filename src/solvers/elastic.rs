@@ -47,7 +47,7 @@ pub fn elastic(group: &PlaneGroup, welds: &WeldGroup, longitudinal: f64, load: &
 /// The points of a piece where the stress can be greatest.
 fn places(piece: &Piece, stress: &Triple) -> Vec<Vector2<f64>> {
     let (low, high) = piece.range();
-    let mut places = vec![piece.position(low), piece.position(high)];
+    let mut places = vec![piece.frame(low).0, piece.frame(high).0];
     if let Shape::Arc { centre, radius, .. } = piece.shape {
         // From the elastic centre through the arc's centre; the stress at the arc's centre is square to it.
         let at_centre = displacement(stress, &centre);

@@ -36,8 +36,7 @@ impl CostFunction for Unbalance<'_> {
 }
 
 /// The motion of smallest unbalance near `start`, by direct search over simplices of the given first size.
-#[must_use]
-pub fn direct_search(
+pub(super) fn direct_search(
     group: &PlaneGroup,
     start: &Triple,
     direction: &Triple,
@@ -56,6 +55,5 @@ pub fn direct_search(
         .run()
         .ok()?;
     let coordinates = result.state().get_best_param()?.clone();
-    let (axes, centre) = (axes, centre);
     Some(centre + axes[0] * coordinates[0] + axes[1] * coordinates[1])
 }

@@ -15,7 +15,7 @@
 //! Valid for a plane group of positive length, for which every load has a state.
 
 use super::atlas::{Atlas, AtlasSettings};
-use super::equilibrium::{Ending, Iterate, NewtonSettings, newton};
+use super::equilibrium::{Ending, Iterate, NewtonSettings, newton, orientation};
 use super::fallback::direct_search;
 use super::outcome::{Motion, NotSolved, Place, Reason, Rupture, State, Ultimate};
 use super::path::{PathSettings, follow};
@@ -145,42 +145,37 @@ impl<'a> UltimateSolver<'a> {
 
     /// Distinct endings of Newton's method from all starts, on coarse quadrature.
     fn search(&self, direction: &Triple, trace: &mut Vec<f64>) -> Result<Vec<Ending>, NotSolved> {
-        let coarse = Quadrature::coarse();
-        let mut endings: Vec<Ending> = Vec::new();
-        let mut best: Option<Ending> = None;
         let settings = NewtonSettings { unbalance: SEARCH_UNBALANCE, ..self.settings.newton };
-        let mut attempt = |start: &Triple, endings: &mut Vec<Ending>| {
-            let Some(ending) = newton(self.group, start, direction, &coarse, &settings) else { return };
-            trace.push(ending.state.unbalance);
-            if best.is_none_or(|known| ending.state.unbalance < known.state.unbalance) {
-                best = Some(ending);
-            }
-            if ending.converged
-                && endings.iter().all(|known| distance(&known.state.q, &ending.state.q) > SAME_MOTION)
-            {
-                endings.push(ending);
-            }
+        let mut hunt = Hunt {
+            group: self.group,
+            direction,
+            settings,
+            quadrature: Quadrature::coarse(),
+            endings: Vec::new(),
+            best: None,
+            trace,
         };
         // The elastic motion: v = F / A and omega rho = (M / rho) / A, so the load itself.
-        attempt(direction, &mut endings);
-        if self.settings.search == Search::All || endings.is_empty() {
-            for start in self.atlas().starts(direction) {
-                attempt(&start, &mut endings);
+        hunt.attempt(direction);
+        if self.settings.search == Search::All || hunt.endings.is_empty() {
+            hunt.attempt_all(&self.atlas().starts(direction));
+            if hunt.signs() != 1 {
+                hunt.quadrature = Quadrature::fine(POINTS[0]);
+                hunt.attempt_all(&self.atlas().wide_starts(direction));
             }
         }
-        if endings.is_empty() {
+        if hunt.endings.is_empty() {
             let nearest = self.atlas().nearest(direction);
             for size in SIMPLICES {
-                let found =
-                    direct_search(self.group, &nearest, direction, &Quadrature::fine(POINTS[0]), size);
-                if let Some(motion) = found {
-                    attempt(&motion, &mut endings);
+                if let Some(motion) = direct_search(self.group, &nearest, direction, &hunt.quadrature, size) {
+                    hunt.attempt(&motion);
                 }
-                if !endings.is_empty() {
+                if !hunt.endings.is_empty() {
                     break;
                 }
             }
         }
+        let Hunt { endings, best, .. } = hunt;
         if endings.is_empty() {
             let residual = best.map_or(f64::INFINITY, |ending| ending.state.unbalance);
             let reason = if best.is_none() { Reason::NoResistance } else { Reason::Stalled };
@@ -255,6 +250,48 @@ impl<'a> UltimateSolver<'a> {
 
     fn motion(&self, q: &Triple) -> Motion {
         Motion { translation: [q.x, q.y], rotation: q.z / self.group.gyration }
+    }
+}
+
+/// A search for distinct endings of Newton's method.
+struct Hunt<'a> {
+    group: &'a PlaneGroup,
+    direction: &'a Triple,
+    settings: NewtonSettings,
+    quadrature: Quadrature,
+    endings: Vec<Ending>,
+    /// The ending of smallest unbalance, converged or not.
+    best: Option<Ending>,
+    trace: &'a mut Vec<f64>,
+}
+
+impl Hunt<'_> {
+    fn attempt(&mut self, start: &Triple) {
+        let Some(ending) = newton(self.group, start, self.direction, &self.quadrature, &self.settings) else {
+            return;
+        };
+        self.trace.push(ending.state.unbalance);
+        if self.best.is_none_or(|known| ending.state.unbalance < known.state.unbalance) {
+            self.best = Some(ending);
+        }
+        let q = &ending.state.q;
+        if ending.converged && self.endings.iter().all(|known| distance(&known.state.q, q) > SAME_MOTION) {
+            self.endings.push(ending);
+        }
+    }
+
+    fn attempt_all(&mut self, starts: &[Triple]) {
+        for start in starts {
+            self.attempt(start);
+        }
+    }
+
+    /// Sum of the orientations of the map at the endings; 1 when none is missing.
+    fn signs(&self) -> i32 {
+        let sign = |ending: &Ending| {
+            if orientation(&ending.state.resultant, &ending.state.utmost) >= 0.0 { 1 } else { -1 }
+        };
+        self.endings.iter().map(sign).sum()
     }
 }
 

@@ -34,7 +34,12 @@ fn compare(seed: u64, groups: usize, side: usize) -> Tally {
             UltimateSolver::new(&group, UltimateSettings { path: false, ..UltimateSettings::default() });
         for direction in directions {
             let expected = oracle::states(&group, &mesh, &direction);
-            let found = solver.solve(&(direction * 1000.0)).unwrap();
+            let found = match solver.solve(&(direction * 1000.0)) {
+                Ok(found) => found,
+                Err(reason) => {
+                    panic!("{reason}: {direction:?} on {index} ({name}), oracle {expected:?}: {group:?}")
+                }
+            };
             let loads: Vec<f64> = found.states.iter().map(|state| state.load_factor * 1000.0).collect();
             tally.loads += 1;
             tally.several += usize::from(expected.len() > 1);
