@@ -24,7 +24,7 @@ pub(super) enum Value {
     /// An integer or a decimal number; infinite or NaN when it is not finite.
     Number(f64),
     /// `true` or `false`.
-    Boolean(bool),
+    Boolean,
     /// A date or time.
     Date(String),
     /// A list.
@@ -39,7 +39,7 @@ impl Value {
         match self {
             Self::Text(_) => "a text",
             Self::Number(_) => "a number",
-            Self::Boolean(_) => "true or false",
+            Self::Boolean => "true or false",
             Self::Date(_) => "a date",
             Self::List(_) => "a list",
             Self::Table(_) => "a table",
@@ -158,7 +158,7 @@ fn node(source: &Spanned<DeValue<'_>>, text: &str) -> Node {
             }))
         }
         DeValue::Float(float) => Value::Number(float.as_str().parse().unwrap_or(f64::NAN)),
-        DeValue::Boolean(boolean) => Value::Boolean(*boolean),
+        DeValue::Boolean(_) => Value::Boolean,
         DeValue::Datetime(date) => Value::Date(date.to_string()),
         DeValue::Array(list) => Value::List(list.iter().map(|item| node(item, text)).collect()),
         DeValue::Table(inner) => Value::Table(table(inner, span.clone(), text)),

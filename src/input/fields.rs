@@ -269,7 +269,7 @@ pub(super) fn text(node: &Node, key: &str, faults: &mut Faults<'_>) -> Option<Lo
         Value::Text(Text { content, .. }) => {
             Some(Located { span: node.span.clone(), value: content.clone() })
         }
-        Value::Number(_) | Value::Boolean(_) | Value::Date(_) | Value::List(_) | Value::Table(_) => {
+        Value::Number(_) | Value::Boolean | Value::Date(_) | Value::List(_) | Value::Table(_) => {
             wrong_kind(node, &format!("`{key}`"), "a text in quotes", faults);
             None
         }
@@ -289,7 +289,7 @@ pub(super) fn field(node: &Node, name: &str, faults: &mut Faults<'_>) -> Option<
         Value::Text(text) => {
             Content::Expression(Expression::read(&text.content, origin.clone(), text.inner, faults)?)
         }
-        Value::Boolean(_) | Value::Date(_) | Value::List(_) | Value::Table(_) => {
+        Value::Boolean | Value::Date(_) | Value::List(_) | Value::Table(_) => {
             wrong_kind(node, name, "a number or a text with a unit", faults);
             return None;
         }
