@@ -1,1 +1,3 @@
 //! Suite.
+mod diagnostics;
+mod reading;
