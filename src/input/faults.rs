@@ -91,6 +91,9 @@ impl<'t> Faults<'t> {
 
     /// Reports a fault at a place.
     pub(super) fn at(&mut self, origin: impl Into<Origin>, message: impl Into<String>) -> Reported<'_> {
+        if self.list.len() >= MOST {
+            return Reported(None);
+        }
         let message = message.into();
         match origin.into() {
             Origin::File(span) => {

@@ -116,6 +116,7 @@ pub(super) struct Field {
 pub(super) struct Fields<'d> {
     table: &'d Table,
     name: &'static str,
+    meant: Vec<String>,
 }
 
 impl<'d> Fields<'d> {
@@ -127,6 +128,7 @@ impl<'d> Fields<'d> {
         later: &[&str],
         faults: &mut Faults<'_>,
     ) -> Self {
+        let mut meant = Vec::new();
         for entry in &table.entries {
             let key = entry.key.as_str();
             if later.contains(&key) {
@@ -134,11 +136,12 @@ impl<'d> Fields<'d> {
             } else if !keys.contains(&key) {
                 let message = format!("unknown key `{}` {name}", super::faults::shortened(key));
                 let near = nearest(key, keys.iter().chain(later).copied());
+                meant.extend(near.map(str::to_owned));
                 let hint = near.map(|near| format!("did you mean `{near}`?")).or_else(|| belongs(key));
                 faults.at(&entry.key_span, message).accepted(listed(keys.iter().copied())).hint_if(hint);
             }
         }
-        Self { table, name }
+        Self { table, name, meant }
     }
 
     /// Place of the table.
@@ -156,8 +159,16 @@ impl<'d> Fields<'d> {
         self.table.get(key).map_or(&self.table.span, |entry| &entry.key_span)
     }
 
+    /// Whether an unknown key was probably meant to be one of these: then none of them is called missing.
+    pub(super) fn meant(&self, keys: &[&str]) -> bool {
+        self.meant.iter().any(|meant| keys.contains(&meant.as_str()))
+    }
+
     /// Reports that a key is missing.
     pub(super) fn missing(&self, key: &str, accepted: &str, faults: &mut Faults<'_>) {
+        if self.meant(&[key]) {
+            return;
+        }
         faults.at(self.span(), format!("the key `{key}` is missing {}", self.name)).accepted(accepted);
     }
 
@@ -165,7 +176,7 @@ impl<'d> Fields<'d> {
     pub(super) fn text(&self, key: &str, faults: &mut Faults<'_>) -> Given<Located<String>> {
         match self.get(key) {
             None => Given::Absent,
-            Some(node) => Given::reported(text(node, key, faults)),
+            Some(node) => Given::reported(text(node, &format!("`{key}`"), faults)),
         }
     }
 
@@ -260,17 +271,17 @@ pub(super) fn wrong_kind(node: &Node, name: &str, wanted: &str, faults: &mut Fau
 }
 
 /// A text that is not empty.
-pub(super) fn text(node: &Node, key: &str, faults: &mut Faults<'_>) -> Option<Located<String>> {
+pub(super) fn text(node: &Node, name: &str, faults: &mut Faults<'_>) -> Option<Located<String>> {
     match &node.value {
         Value::Text(Text { content, .. }) if content.trim().is_empty() => {
-            faults.at(&node.span, format!("`{key}` must not be empty"));
+            faults.at(&node.span, format!("{name} must not be empty"));
             None
         }
         Value::Text(Text { content, .. }) => {
             Some(Located { span: node.span.clone(), value: content.clone() })
         }
         Value::Number(_) | Value::Boolean | Value::Date(_) | Value::List(_) | Value::Table(_) => {
-            wrong_kind(node, &format!("`{key}`"), "a text in quotes", faults);
+            wrong_kind(node, name, "a text in quotes", faults);
             None
         }
     }

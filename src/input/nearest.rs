@@ -6,8 +6,13 @@
 /// Longest name that is compared; longer ones have no neighbour worth naming.
 const LONGEST: usize = 64;
 
-/// The candidate nearest to `name`, if one is near enough (a third of the letters, at least one).
+/// Fewest letters of a beginning that stands for the whole name.
+const SHORTEST_BEGINNING: usize = 3;
+
+/// The candidate nearest to `name`, if one is near enough (a third of the letters, at least one); otherwise the
+/// first that begins with it.
 pub(super) fn nearest<'c>(name: &str, candidates: impl IntoIterator<Item = &'c str>) -> Option<&'c str> {
+    let mut begun = None;
     let letters: Vec<char> = name.chars().take(LONGEST + 1).collect();
     if letters.is_empty() || letters.len() > LONGEST {
         return None;
@@ -18,6 +23,9 @@ pub(super) fn nearest<'c>(name: &str, candidates: impl IntoIterator<Item = &'c s
         if other.len() > LONGEST || candidate == name {
             continue;
         }
+        if letters.len() >= SHORTEST_BEGINNING && candidate.starts_with(name) {
+            begun = begun.or(Some(candidate));
+        }
         let found = distance(&letters, &other);
         let allowed = 2 * (letters.len().max(other.len()) / 3).max(1);
         // A name of one or two letters is near only to its other spelling in capitals or to a longer form.
@@ -26,7 +34,7 @@ pub(super) fn nearest<'c>(name: &str, candidates: impl IntoIterator<Item = &'c s
             best = Some((found, candidate));
         }
     }
-    best.map(|(_, candidate)| candidate)
+    best.map(|(_, candidate)| candidate).or(begun)
 }
 
 /// Twice the edit distance (a difference of case alone counts one).
@@ -84,6 +92,7 @@ mod tests {
         assert_eq!(nearest("thraot", KEYS), Some("throat"));
         assert_eq!(nearest("pth", KEYS), Some("path"));
         assert_eq!(nearest("KN", KEYS), Some("kN"));
+        assert_eq!(nearest("aisc", ["nominal", "aisc-360-22-lrfd"]), Some("aisc-360-22-lrfd"));
     }
 
     #[test]

@@ -69,12 +69,14 @@ pub(super) fn unit_names() -> [&'static str; 18] {
     UNITS.map(|(name, _, _)| name)
 }
 
-/// Two units written without a space between them: `kNm` is `kN m`.
+/// A force and a length written without a space between them: `kNm` is `kN m`.
 pub(super) fn split_unit(name: &str) -> Option<(&str, &str)> {
-    (1..name.len())
-        .filter(|at| name.is_char_boundary(*at))
-        .map(|at| name.split_at(at))
-        .find(|(first, second)| unit(first).is_some() && unit(second).is_some())
+    (1..name.len()).filter(|at| name.is_char_boundary(*at)).map(|at| name.split_at(at)).find(
+        |(first, second)| {
+            unit(first).is_some_and(|unit| unit.exponents == Exponents::FORCE)
+                && unit(second).is_some_and(|unit| unit.exponents == Exponents::LENGTH)
+        },
+    )
 }
 
 /// An example of a quantity of this dimension, for messages.
@@ -138,6 +140,7 @@ mod tests {
         assert_eq!(split_unit("kNm"), Some(("kN", "m")));
         assert_eq!(split_unit("Nmm"), Some(("N", "mm")));
         assert_eq!(split_unit("kN"), None);
+        assert_eq!(split_unit("mmm"), None);
         assert_eq!(split_unit("é"), None);
     }
 

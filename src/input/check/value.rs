@@ -90,7 +90,7 @@ impl<'p> Values<'p> {
         if value >= low && value <= high {
             return Some(value);
         }
-        let size = if value < low { "small" } else { "large" };
+        let size = if value.abs() < high { "small" } else { "large" };
         let found = self.shown(dimension, value);
         let range = format!("{} to {}", self.shown(dimension, low), self.shown(dimension, high));
         faults.at(origin, format!("{name} is too {size}, found {found}")).accepted(range);

@@ -46,7 +46,7 @@ pub(in crate::input) struct CurveEntry {
 pub(super) fn read(node: &Node, faults: &mut Faults<'_>) -> Option<LawEntry> {
     match &node.value {
         Value::Table(table) => Some(LawEntry::Own(read_own(table, faults))),
-        Value::Text(_) => text(node, "law", faults).map(LawEntry::Known),
+        Value::Text(_) => text(node, "`law`", faults).map(LawEntry::Known),
         Value::Number(_) | Value::Boolean | Value::Date(_) | Value::List(_) => {
             wrong_kind(node, "`law`", "the identifier of a law or a table with curves", faults);
             None

@@ -59,8 +59,12 @@ pub(super) fn read_load(table: &Table, faults: &mut Faults<'_>) -> LoadEntry {
     let force = keys.get("force").map_or(Given::Absent, |node| Given::reported(read_force(node, faults)));
     let moment = keys.get("moment").map_or(Given::Absent, |node| Given::reported(read_moment(node, faults)));
     if force.is_absent() && moment.is_absent() {
-        faults.at(keys.span(), "the load has neither force nor moment").accepted("`force`, `moment` or both");
-    } else if at.is_absent() && !force.is_absent() {
+        if !keys.meant(&["force", "moment"]) {
+            faults
+                .at(keys.span(), "the load has neither force nor moment")
+                .accepted("`force`, `moment` or both");
+        }
+    } else if at.is_absent() && !force.is_absent() && !keys.meant(&["at"]) {
         let message = "the key `at` is missing in `[[load]]`: a force needs its point of application";
         faults.at(keys.span(), message).accepted("a point");
     }

@@ -54,6 +54,7 @@ fn read_filler_table(table: &Table, faults: &mut Faults<'_>) -> Option<FillerEnt
     match (strength, class) {
         (Given::Value(strength), Given::Absent) => Some(FillerEntry::Strength(strength)),
         (Given::Absent, Given::Value(class)) => Some(FillerEntry::Class(class)),
+        (Given::Absent, Given::Absent) if keys.meant(&["strength", "class"]) => None,
         (Given::Absent, Given::Absent) => {
             let accepted = "`strength` (tensile strength) or `class`";
             faults.at(keys.span(), "the filler metal has neither strength nor class").accepted(accepted);

@@ -78,16 +78,16 @@ pub(super) fn read(document: &Table, faults: &mut Faults<'_>) -> File {
     let (welds, sound_welds) = fields.tables("weld", faults);
     let (loads, sound_loads) = fields.tables("load", faults);
     let (combinations, _) = fields.tables("combination", faults);
-    if welds.is_empty() && sound_welds {
+    if welds.is_empty() && sound_welds && !fields.meant(&["weld"]) {
         faults.whole("there is no weld").accepted("at least one `[[weld]]`");
     }
-    if loads.is_empty() && sound_loads {
+    if loads.is_empty() && sound_loads && !fields.meant(&["load"]) {
         faults.whole("there is no load").accepted("at least one `[[load]]`; a load of zero will do");
     }
     File {
         title: fields.text("title", faults),
         units: read_units(&fields, faults),
-        rules: read_rules(&fields, faults),
+        rules: if fields.meant(&["rules"]) { Given::Faulty } else { read_rules(&fields, faults) },
         law: fields.get("law").map_or(Given::Absent, |node| Given::reported(law::read(node, faults))),
         elements: fields.field("elements", faults),
         document: read_document(&fields, faults),

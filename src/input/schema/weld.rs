@@ -75,7 +75,9 @@ pub(super) fn read(table: &Table, faults: &mut Faults<'_>) -> WeldEntry {
         Given::Value(table) => Given::Value(read_arc(table, faults)),
     };
     if path.is_absent() && arc.is_absent() {
-        faults.at(keys.span(), "the weld has no run").accepted("`path` (a polyline) or `arc`");
+        if !keys.meant(&["path", "arc"]) {
+            faults.at(keys.span(), "the weld has no run").accepted("`path` (a polyline) or `arc`");
+        }
     } else if !path.is_absent() && !arc.is_absent() {
         faults
             .at(keys.key_span("arc"), "the weld has a path and an arc")
@@ -104,6 +106,7 @@ fn read_size(keys: &Fields<'_>, faults: &mut Faults<'_>) -> Option<SizeEntry> {
     let throat = keys.field("throat", faults);
     let accepted = "one of `leg`, `legs` and `throat`";
     match given.as_slice() {
+        [] if keys.meant(&["leg", "legs", "throat"]) => None,
         [] => {
             faults.at(keys.span(), "the weld has no size").accepted(accepted);
             None
@@ -182,7 +185,7 @@ fn read_plates(keys: &Fields<'_>, faults: &mut Faults<'_>) -> Vec<Located<String
     match keys.get("plates") {
         None => Vec::new(),
         Some(Node { value: Value::List(items), .. }) => {
-            items.iter().filter_map(|item| text(item, "plates", faults)).collect()
+            items.iter().filter_map(|item| text(item, "a name in `plates`", faults)).collect()
         }
         Some(node) => {
             wrong_kind(node, "`plates`", "a list of names of plates", faults);
