@@ -193,9 +193,9 @@ mod tests {
             parsed("a = 1_000\nb = 0x10\nc = 1e999\nd = nan\ne = 123456789012345678901234567890\n");
         assert!(faults.is_empty(), "{faults:?}");
         let table = table.unwrap();
-        let number = |key: &str| match table.get(key).unwrap().node.value {
-            Value::Number(number) => number,
-            _ => panic!("a number"),
+        let number = |key: &str| {
+            let Value::Number(number) = table.get(key).unwrap().node.value else { panic!("a number") };
+            number
         };
         assert!((number("a") - 1000.0).abs() < 1e-12 && (number("b") - 16.0).abs() < 1e-12);
         assert!(number("c").is_infinite() && number("d").is_nan());

@@ -191,7 +191,7 @@ fn unknown(name: &str, span: &Span, parameters: &[&str]) -> ExpressionFault {
 #[cfg(test)]
 #[allow(clippy::float_cmp)] // exact factors are meant exactly
 mod tests {
-    use super::super::expression::parse;
+    use super::super::grammar::parse;
     use super::*;
 
     fn value(text: &str) -> Result<Quantity, String> {

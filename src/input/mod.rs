@@ -7,8 +7,9 @@
 //! | parameters | `parameters` | `[parameters]`, `--set` | values of the named quantities |
 //! | check | `check` | schema, parameters | [`Joint`] |
 //!
-//! Beside them: `quantity`, `lexer`, `expression`, `evaluate`, `dimension` (numbers with units), `fields`
-//! (keys of a table), `faults` (the list), `nearest` (hints), and [`catalog`] (what the program ships).
+//! Beside them: `lexer`, `grammar`, `literal`, `expression`, `evaluate`, `quantity`, `dimension` (numbers with
+//! units), `field` and `fields` (values and keys of a table), `faults` (the list), `nearest` (hints), and
+//! [`catalog`] (what the program ships).
 //!
 //! Nothing here reads a file or the environment: the caller hands over the text and the overrides.
 
@@ -19,8 +20,11 @@ mod document;
 mod evaluate;
 mod expression;
 mod faults;
+mod field;
 mod fields;
+mod grammar;
 mod lexer;
+mod literal;
 mod nearest;
 mod parameters;
 mod quantity;

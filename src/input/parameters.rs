@@ -7,7 +7,7 @@ use super::document::Table;
 use super::evaluate::{Looked, NoValue, evaluate};
 use super::expression::{is_reserved, names};
 use super::faults::{Faults, Origin, Span};
-use super::fields::{Content, Expression, Field, field, report};
+use super::field::{Content, Expression, Field, field, report};
 use super::lexer::is_name;
 use super::nearest::{listed, suggestion};
 use super::quantity::Quantity;

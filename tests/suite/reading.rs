@@ -12,13 +12,9 @@ fn read(text: &str) -> Joint {
 }
 
 fn read_with(text: &str, options: &Options) -> Joint {
-    match read_joint("folder/test.toml", text, options) {
-        Ok(joint) => joint,
-        Err(faults) => {
-            let list: Vec<String> = faults.iter().map(ToString::to_string).collect();
-            panic!("{}", list.join("\n"));
-        }
-    }
+    read_joint("folder/test.toml", text, options)
+        .map_err(|faults| faults.iter().map(ToString::to_string).collect::<Vec<_>>())
+        .expect("a file without faults")
 }
 
 fn set(pairs: &[(&str, &str)]) -> Options {

@@ -65,6 +65,7 @@ struct Shape {
 
 #[derive(Deserialize)]
 #[serde(tag = "form", rename_all = "kebab-case", deny_unknown_fields)]
+#[allow(clippy::large_enum_variant)] // one value at a time, taken apart at once
 enum File {
     LesikKennedy {
         id: String,

@@ -1,7 +1,7 @@
 //! Points, paths and arcs, all in the plane z = 0 for now.
 
 use super::super::faults::Faults;
-use super::super::fields::{Given, Located};
+use super::super::field::{Given, Located};
 use super::super::schema::{ArcEntry, Point};
 use super::value::Values;
 use crate::model::{LARGEST_LENGTH, Run, SMALLEST_LENGTH, Vector};

@@ -3,7 +3,7 @@
 use super::super::Options;
 use super::super::catalog;
 use super::super::faults::{Faults, Origin, shortened};
-use super::super::fields::Given;
+use super::super::field::Given;
 use super::super::nearest::{listed, suggestion};
 use super::super::schema::{CurveEntry, File, LawEntry, OwnLaw};
 use super::value::Values;

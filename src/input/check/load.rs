@@ -4,7 +4,7 @@
 //! components that are exactly zero.
 
 use super::super::faults::{Faults, shortened};
-use super::super::fields::Given;
+use super::super::field::Given;
 use super::super::nearest::{listed, suggestion};
 use super::super::schema::{CombinationEntry, File, ForceEntry, LoadEntry, MomentEntry};
 use super::value::Values;

@@ -2,7 +2,7 @@
 
 use super::super::catalog;
 use super::super::faults::{Faults, Origin, Span, shortened};
-use super::super::fields::{Content, Expression, Field, Given, Located};
+use super::super::field::{Content, Expression, Field, Given, Located};
 use super::super::lexer::is_name;
 use super::super::nearest::{listed, suggestion};
 use super::super::schema::{FillerEntry, PlateEntry};

@@ -13,7 +13,7 @@ mod weld;
 use super::Options;
 use super::catalog;
 use super::faults::{Faults, Origin, shortened};
-use super::fields::{Field, Given};
+use super::field::{Field, Given};
 use super::nearest::{listed, suggestion};
 use super::parameters::Parameters;
 use super::schema::File;

@@ -2,7 +2,7 @@
 
 use super::super::dimension::{Exponents, name};
 use super::super::faults::{Faults, Origin};
-use super::super::fields::{Content, Field};
+use super::super::field::{Content, Field};
 use super::super::parameters::Parameters;
 use super::super::quantity::{Quantity, example, number, shown};
 use crate::model::{LARGEST_LENGTH, LARGEST_STRENGTH, SMALLEST_LENGTH};

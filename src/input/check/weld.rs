@@ -1,7 +1,7 @@
 //! Welds: size, run, filler metal, references to plates.
 
 use super::super::faults::{Faults, shortened};
-use super::super::fields::Given;
+use super::super::field::Given;
 use super::super::nearest::{listed, suggestion};
 use super::super::schema::{File, SizeEntry, WeldEntry};
 use super::value::Values;

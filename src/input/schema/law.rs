@@ -10,7 +10,8 @@
 
 use crate::input::document::{Node, Table, Value};
 use crate::input::faults::{Faults, Span};
-use crate::input::fields::{Field, Fields, Given, Located, fields, text, wrong_kind};
+use crate::input::field::{Field, Given, Located, fields, text, wrong_kind};
+use crate::input::fields::Fields;
 
 /// What the file says about the law.
 #[derive(Debug, Clone)]

@@ -3,10 +3,12 @@
 use super::weld::{Point, read_point};
 use crate::input::document::{Node, Table, Value};
 use crate::input::faults::{Faults, Span};
-use crate::input::fields::{Field, Fields, Given, Located, field, wrong_kind};
+use crate::input::field::{Field, Given, Located, field, wrong_kind};
+use crate::input::fields::Fields;
 
 /// A force as written.
 #[derive(Debug, Clone)]
+#[allow(clippy::large_enum_variant)] // one a load: a box would save nothing
 pub(in crate::input) enum ForceEntry {
     /// Its components.
     Components(Point),
@@ -91,7 +93,7 @@ fn read_moment(node: &Node, faults: &mut Faults<'_>) -> Option<MomentEntry> {
     let Value::List(_) = &node.value else {
         return field(node, "`moment`", faults).map(MomentEntry::Plane);
     };
-    let components = crate::input::fields::fields(node, "`moment`", faults)?;
+    let components = crate::input::field::fields(node, "`moment`", faults)?;
     if components.value.len() == 3 {
         return Some(MomentEntry::Components(components));
     }

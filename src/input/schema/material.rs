@@ -5,7 +5,8 @@
 
 use crate::input::document::{Node, Table, Text, Value};
 use crate::input::faults::{Faults, Span};
-use crate::input::fields::{Field, Fields, Given, Located, field};
+use crate::input::field::{Field, Given, Located, field};
+use crate::input::fields::Fields;
 
 /// What the file says about a filler metal.
 #[derive(Debug, Clone)]

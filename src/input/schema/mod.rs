@@ -15,7 +15,8 @@ pub(super) use weld::{ArcEntry, Point, SizeEntry, WeldEntry};
 
 use super::document::{Node, Table, Value};
 use super::faults::Faults;
-use super::fields::{Field, Fields, Given, Located, choice, wrong_kind};
+use super::field::{Field, Given, Located, choice, wrong_kind};
+use super::fields::Fields;
 use super::parameters::{self, ParameterEntry};
 use crate::model::Document;
 use crate::units::UnitSystem;

@@ -3,7 +3,8 @@
 use super::material::{FillerEntry, read_filler};
 use crate::input::document::{Node, Table, Value};
 use crate::input::faults::{Faults, Span};
-use crate::input::fields::{Field, Fields, Given, Located, fields, text, wrong_kind};
+use crate::input::field::{Field, Given, Located, fields, text, wrong_kind};
+use crate::input::fields::Fields;
 
 const KEYS: [&str; 11] =
     ["name", "leg", "legs", "throat", "dihedral", "sides", "filler", "path", "arc", "plates", "set"];
