@@ -195,4 +195,17 @@ proptest! {
         texts.extend(catalog::EXAMPLES.iter().map(|(_, text)| *text));
         check_any(&edited(texts[which], &edits));
     }
+
+    #[test]
+    fn any_order_of_headers_is_read_or_refused(
+        lines in prop::collection::vec(prop::sample::select(vec![
+            "[weld]", "[[weld]]", "[weld.arc]", "[[weld.arc]]", "weld.arc.radius = 3", "weld = []", "weld = [{}]",
+            "weld = {}", "arc.radius = 4", "arc = {}", "[law]", "[[law.curve]]", "[law.curve]", "law.curve = [1]",
+            "law = 'a'", "[parameters]", "b = 'b'", "b.c = 1", "[parameters.b]", "[\"\"]", "'' = 1", "[a", "= 1",
+            "[[load]]", "force.size = 1", "force = [0, 1]", "at = [0, 0]", "case = 'x'", "[[combination]]",
+            "factors.x = 1", "[combination.factors]", "units = 'us'", "rules = 'nominal'", "name = 'n'",
+        ]), 0..16),
+    ) {
+        check_any(&lines.join("\n"));
+    }
 }
