@@ -1,7 +1,10 @@
 //! Everything that is checked from outside the library, in one binary.
-#![allow(missing_docs, clippy::cast_precision_loss, clippy::cast_possible_truncation, clippy::cast_sign_loss)]
-#![allow(clippy::unwrap_used, clippy::print_stdout, unreachable_pub)]
+#![allow(missing_docs, unreachable_pub)]
+#![allow(clippy::cast_precision_loss, clippy::cast_possible_truncation, clippy::cast_sign_loss)]
+#![allow(clippy::unwrap_used, clippy::panic, clippy::print_stdout)]
 
+mod diagnostics;
 mod fixture;
 mod oracle;
+mod reading;
 mod states;

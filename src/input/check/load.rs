@@ -1,0 +1,206 @@
+//! Loads, cases and combinations. Factors apply to loads, never to results.
+//!
+//! A force of size F at the angle a from the x axis is `(F cos a, F sin a)`; multiples of a right angle give
+//! components that are exactly zero.
+
+use super::super::faults::{Faults, shortened};
+use super::super::field::Given;
+use super::super::nearest::{listed, suggestion};
+use super::super::schema::{CombinationEntry, File, ForceEntry, LoadEntry, MomentEntry};
+use super::value::Values;
+use super::{geometry, material};
+use crate::model::{LARGEST_FORCE, LARGEST_MOMENT, LoadCase, Vector, Wrench};
+use crate::units::Dimension;
+use std::f64::consts::FRAC_PI_2;
+
+const LOADS_IN_SPACE: &str = "loads in space are not solved yet";
+
+/// Greatest load factor accepted in a combination.
+const LARGEST_FACTOR: f64 = 1e4;
+
+/// What has to be verified, and whether it comes from combinations.
+pub(super) fn cases(schema: &File, values: &Values<'_>, faults: &mut Faults<'_>) -> (Vec<LoadCase>, bool) {
+    let mut cases: Vec<LoadCase> = Vec::new();
+    for entry in &schema.loads {
+        let wrench = wrench(entry, values, faults);
+        let (Some(name), Some(wrench)) = (entry.case.value(), wrench) else { continue };
+        match cases.iter_mut().find(|case| case.name == name.value) {
+            Some(case) => case.wrench = case.wrench.plus(&wrench),
+            None => cases.push(LoadCase { name: name.value.clone(), wrench }),
+        }
+    }
+    if schema.combinations.is_empty() {
+        return (cases, false);
+    }
+    let names = schema.combinations.iter().filter_map(|combination| combination.name.value());
+    material::unique(names, "combinations", faults);
+    let combined = schema
+        .combinations
+        .iter()
+        .filter_map(|entry| combination(entry, schema, &cases, values, faults))
+        .collect();
+    (combined, true)
+}
+
+/// The load about the origin.
+fn wrench(entry: &LoadEntry, values: &Values<'_>, faults: &mut Faults<'_>) -> Option<Wrench> {
+    let at = match &entry.at {
+        Given::Absent => Some(Vector::zeros()),
+        Given::Faulty => None,
+        Given::Value(point) => geometry::point(point, LOADS_IN_SPACE, values, faults),
+    };
+    let force = match &entry.force {
+        Given::Absent => Some(Vector::zeros()),
+        Given::Faulty => None,
+        Given::Value(force) => self::force(force, values, faults),
+    };
+    let moment = match &entry.moment {
+        Given::Absent => Some(Vector::zeros()),
+        Given::Faulty => None,
+        Given::Value(moment) => self::moment(moment, values, faults),
+    };
+    match Wrench::new(at?, force?, moment?) {
+        Ok(wrench) => Some(wrench.about(Vector::zeros())),
+        Err(error) => {
+            faults.at(&entry.span, error.to_string());
+            None
+        }
+    }
+}
+
+fn force(entry: &ForceEntry, values: &Values<'_>, faults: &mut Faults<'_>) -> Option<Vector> {
+    match entry {
+        ForceEntry::Components(components) => {
+            let read: Vec<Option<f64>> = components
+                .value
+                .iter()
+                .map(|field| values.limited(field, Dimension::Force, LARGEST_FORCE, faults))
+                .collect();
+            if let (Some(field), Some(Some(z))) = (components.value.get(2), read.get(2))
+                && z.abs() > 0.0
+            {
+                let found = values.shown(Dimension::Force, *z);
+                faults
+                    .at(&field.origin, format!("{LOADS_IN_SPACE}, found a force of {found} along z"))
+                    .accepted("0 along z");
+                return None;
+            }
+            match read.as_slice() {
+                [Some(x), Some(y)] | [Some(x), Some(y), Some(_)] => Some(Vector::new(*x, *y, 0.0)),
+                _ => None,
+            }
+        }
+        ForceEntry::Polar { size, angle } => {
+            let length = size.value().and_then(|field| {
+                let length = values.limited(field, Dimension::Force, LARGEST_FORCE, faults)?;
+                if length < 0.0 {
+                    let found = values.shown(Dimension::Force, length);
+                    faults
+                        .at(&field.origin, format!("the size of a force must not be negative, found {found}"))
+                        .hint("turn its angle by 180 degrees");
+                    return None;
+                }
+                Some(length)
+            });
+            let angle = angle
+                .value()
+                .and_then(|field| values.between(field, Dimension::Angle, (-36_000.0, 36_000.0), faults));
+            Some(direction(angle?) * length?)
+        }
+    }
+}
+
+/// The unit vector at an angle from the x axis, exact at multiples of a right angle.
+fn direction(angle: f64) -> Vector {
+    let turns = angle / FRAC_PI_2;
+    let whole = turns.round();
+    if (turns - whole).abs() > 1e-14 * whole.abs().max(1.0) {
+        return Vector::new(angle.cos(), angle.sin(), 0.0);
+    }
+    match whole.rem_euclid(4.0) {
+        quarter if quarter < 0.5 => Vector::x(),
+        quarter if quarter < 1.5 => Vector::y(),
+        quarter if quarter < 2.5 => -Vector::x(),
+        _ => -Vector::y(),
+    }
+}
+
+fn moment(entry: &MomentEntry, values: &Values<'_>, faults: &mut Faults<'_>) -> Option<Vector> {
+    let components = match entry {
+        MomentEntry::Plane(field) => {
+            let z = values.limited(field, Dimension::Moment, LARGEST_MOMENT, faults)?;
+            return Some(Vector::new(0.0, 0.0, z));
+        }
+        MomentEntry::Components(components) => components,
+    };
+    let read: Vec<Option<f64>> = components
+        .value
+        .iter()
+        .map(|field| values.limited(field, Dimension::Moment, LARGEST_MOMENT, faults))
+        .collect();
+    let [Some(x), Some(y), Some(z)] = read.as_slice() else { return None };
+    if x.abs() > 0.0 || y.abs() > 0.0 {
+        let message = format!("{LOADS_IN_SPACE}, found a moment about x or y");
+        faults.at(&components.span, message).accepted("[0, 0, moment]");
+        return None;
+    }
+    Some(Vector::new(0.0, 0.0, *z))
+}
+
+fn combination(
+    entry: &CombinationEntry,
+    schema: &File,
+    cases: &[LoadCase],
+    values: &Values<'_>,
+    faults: &mut Faults<'_>,
+) -> Option<LoadCase> {
+    let names = || schema.loads.iter().filter_map(|load| load.case.value()).map(|name| name.value.as_str());
+    let all_named = schema.loads.iter().all(|load| load.case.value().is_some());
+    let mut sum = Wrench { force: Vector::zeros(), moment: Vector::zeros(), reference: Vector::zeros() };
+    let mut sound = true;
+    for (case, field) in &entry.factors {
+        let factor =
+            field.as_ref().and_then(|field| values.limited(field, Dimension::Pure, LARGEST_FACTOR, faults));
+        if !names().any(|name| name == case.value) {
+            sound = false;
+            if all_named && names().next().is_some() {
+                let mut known: Vec<&str> = Vec::new();
+                for name in names() {
+                    if !known.contains(&name) {
+                        known.push(name);
+                    }
+                }
+                faults
+                    .at(&case.span, format!("there is no load of the case `{}`", shortened(&case.value)))
+                    .accepted(listed(known.iter().copied()))
+                    .hint_if(suggestion(&case.value, known.iter().copied()));
+            }
+            continue;
+        }
+        let found = cases.iter().find(|known| known.name == case.value);
+        match (factor, found) {
+            (Some(factor), Some(found)) => sum = sum.plus(&found.wrench.scaled(factor)),
+            _ => sound = false,
+        }
+    }
+    let name = entry.name.value()?.value.clone();
+    sound.then_some(LoadCase { name, wrench: sum })
+}
+
+#[cfg(test)]
+#[allow(clippy::float_cmp)] // exact components are meant exactly
+mod tests {
+    use super::*;
+
+    #[test]
+    fn right_angles_are_exact() {
+        for (degrees, x, y) in
+            [(0.0, 1.0, 0.0), (90.0, 0.0, 1.0), (-90.0, 0.0, -1.0), (180.0, -1.0, 0.0), (630.0, 0.0, -1.0)]
+        {
+            let found = direction(f64::to_radians(degrees));
+            assert_eq!((found.x, found.y), (x, y), "{degrees}");
+        }
+        let found = direction(f64::to_radians(60.0));
+        assert!((found.x - 0.5).abs() < 1e-15 && (found.norm() - 1.0).abs() < 1e-15);
+    }
+}
