@@ -1,1 +1,17 @@
-//! Report to text.
+//! Report to text: for people, for spreadsheets, for other programs.
+//!
+//! ```text
+//! Report -> check_text     verdict first, the two methods side by side   text/
+//!        -> check_json     schema weldpole.check/1                       json/
+//!        -> elements_csv   one row per element of weld                   csv/elements.rs
+//!        -> summary_csv    one row per case                              csv/summary.rs
+//! RuleSet, Law -> rules_text, rules_json                                 rules.rs
+//! ```
+//!
+//! Writers compute nothing: they ask the report. Rounding and unit text are in `number.rs` alone.
+
+mod layout;
+mod number;
+mod table;
+
+pub use layout::{Emphasis, Layout, Painter, plain};
