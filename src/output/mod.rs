@@ -10,8 +10,13 @@
 //!
 //! Writers compute nothing: they ask the report. Rounding and unit text are in `number.rs` alone.
 
+#[cfg(test)]
+mod fixture;
+mod json;
 mod layout;
+mod names;
 mod number;
 mod table;
 
+pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
