@@ -5,11 +5,11 @@
 //!        -> check_json     schema weldpole.check/1                       json/
 //!        -> elements_csv   one row per element of weld                   csv/elements.rs
 //!        -> summary_csv    one row per case                              csv/summary.rs
-//! RuleSet, Law -> rules_text, rules_json                                 rules.rs
 //! ```
 //!
 //! Writers compute nothing: they ask the report. Rounding and unit text are in `number.rs` alone.
 
+mod csv;
 #[cfg(test)]
 mod fixture;
 mod json;
@@ -18,5 +18,6 @@ mod names;
 mod number;
 mod table;
 
+pub use csv::{elements_csv, summary_csv};
 pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
