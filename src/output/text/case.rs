@@ -72,6 +72,8 @@ fn methods(case: &CaseReport, joint: &Joint, layout: &Layout) -> String {
         table.row(vec![label.into(), clip(&left, METHOD_WIDTH).into(), clip(&right, METHOD_WIDTH).into()]);
     };
     row("method", words::basis(Basis::Ultimate).into(), words::basis(Basis::Elastic).into());
+    let word = |basis: Basis| if rules.accepts(basis) { "accepted" } else { "information" }.to_owned();
+    row("under these rules", word(Basis::Ultimate), word(Basis::Elastic));
     row(
         "nominal strength",
         resultant(case, nominal(ultimate), units),
