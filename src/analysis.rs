@@ -1,5 +1,9 @@
 //! The whole calculation of one joint, from a [`Joint`] to a [`Report`].
 
+mod comparison;
+
+pub use comparison::Strength;
+
 use crate::model::{Basis, Confirmation, Joint, Vector, Wrench};
 use crate::solvers::{Elastic, NotSolved, Ultimate};
 

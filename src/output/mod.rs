@@ -1,1 +1,28 @@
-//! Report to text.
+//! Report to text: for people, for spreadsheets, for other programs.
+//!
+//! ```text
+//! Report -> check_text     verdict first, the two methods side by side   text/
+//!        -> check_json     schema weldpole.check/1                       json/
+//!        -> elements_csv   one row per element of weld                   csv/elements.rs
+//!        -> summary_csv    one row per case                              csv/summary.rs
+//! RuleSet, Law -> rules_text, rules_json                                 rules.rs
+//! ```
+//!
+//! Writers compute nothing: they ask the report. Rounding and unit text are in `number.rs` alone.
+
+mod csv;
+#[cfg(test)]
+mod fixture;
+mod json;
+mod layout;
+mod names;
+mod number;
+mod rules;
+mod table;
+mod text;
+
+pub use csv::{elements_csv, summary_csv};
+pub use json::check_json;
+pub use layout::{Emphasis, Layout, Painter, plain};
+pub use rules::{law_text, rule_set_text, rules_json, rules_text};
+pub use text::check_text;

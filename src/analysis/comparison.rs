@@ -1,0 +1,136 @@
+//! Questions a reader asks of a report: how strong by each method, which is greater, does the joint hold.
+//!
+//! | symbol | code | unit | meaning |
+//! |---|---|---|---|
+//! | lambda | `load_factor` | - | multiplies the given load to reach the nominal strength |
+//! | lambda_d | `design_load_factor` | - | the same for the design strength |
+//! | U | `utilisation` | - | 1 / lambda_d |
+//!
+//! The firewall stands here and nowhere else: where the rule set does not accept the ultimate analysis, its
+//! design strength and utilisation do not exist.
+
+use super::{Analyses, CaseReport, Check, Grade, Report, Status};
+use crate::model::{Basis, RuleSet};
+use crate::solvers::{Elastic, NotSolved, Ultimate};
+
+/// What one method says about the strength of the group under the load of one case.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Strength {
+    /// Load factor to the nominal strength.
+    pub load_factor: f64,
+    /// Load factor to the design strength; `None` where the rule set does not accept the method.
+    pub design_load_factor: Option<f64>,
+}
+
+impl Strength {
+    /// 1 / `design_load_factor`.
+    #[must_use]
+    pub fn utilisation(&self) -> Option<f64> {
+        self.design_load_factor.map(|factor| 1.0 / factor)
+    }
+}
+
+impl CaseReport {
+    /// The answer of the ultimate analysis, if there is one.
+    #[must_use]
+    pub fn ultimate(&self) -> Option<&Ultimate> {
+        match &self.analyses {
+            Analyses::Loaded { ultimate: Ok(ultimate), .. } => Some(ultimate),
+            Analyses::Loaded { .. } | Analyses::Unloaded => None,
+        }
+    }
+
+    /// Why the ultimate analysis has no answer, if it has none for a load that is not zero.
+    #[must_use]
+    pub fn not_solved(&self) -> Option<&NotSolved> {
+        match &self.analyses {
+            Analyses::Loaded { ultimate: Err(reason), .. } => Some(reason),
+            Analyses::Loaded { .. } | Analyses::Unloaded => None,
+        }
+    }
+
+    /// The answer of the elastic vector method; `None` when the load is zero.
+    #[must_use]
+    pub fn elastic(&self) -> Option<&Elastic> {
+        match &self.analyses {
+            Analyses::Loaded { elastic, .. } => Some(elastic),
+            Analyses::Unloaded => None,
+        }
+    }
+
+    /// Strength by the ultimate method.
+    #[must_use]
+    pub fn ultimate_strength(&self, rules: &RuleSet) -> Option<Strength> {
+        let load_factor = self.ultimate()?.governing().load_factor;
+        let accepted = rules.accepts(Basis::Ultimate);
+        let design_load_factor = accepted.then(|| load_factor * rules.design.multiplier());
+        Some(Strength { load_factor, design_load_factor })
+    }
+
+    /// Strength by the elastic vector method.
+    #[must_use]
+    pub fn elastic_strength(&self, rules: &RuleSet) -> Option<Strength> {
+        let load_factor = self.elastic()?.load_factor;
+        Some(Strength { load_factor, design_load_factor: Some(load_factor * rules.design.multiplier()) })
+    }
+
+    /// Nominal load factor of the ultimate method over that of the elastic method.
+    #[must_use]
+    pub fn ultimate_over_elastic(&self) -> Option<f64> {
+        Some(self.ultimate()?.governing().load_factor / self.elastic()?.load_factor)
+    }
+
+    /// Size of the load that is `factor` times the given one, in the measure of the checks: N, or N mm and
+    /// `true` where the load is a moment. `None` when there is no check to take the measure from.
+    #[must_use]
+    pub fn load_times(&self, factor: f64) -> Option<(f64, bool)> {
+        self.checks.first().map(|check| (check.demand * factor, check.in_moment))
+    }
+
+    /// The check that decides the case.
+    #[must_use]
+    pub fn governing_check(&self) -> Option<&Check> {
+        let id = &self.verification.as_ref()?.check;
+        self.checks.iter().find(|check| check.id == *id)
+    }
+}
+
+impl Check {
+    /// Design strength, where the row has one: an ultimate analysis that is information only has none.
+    #[must_use]
+    pub fn design_resistance(&self) -> Option<f64> {
+        self.has_design_strength().then_some(self.resistance)
+    }
+
+    /// Utilisation, where the row has one.
+    #[must_use]
+    pub fn design_utilisation(&self) -> Option<f64> {
+        self.has_design_strength().then_some(self.utilisation)
+    }
+
+    fn has_design_strength(&self) -> bool {
+        self.accepted || self.basis != Basis::Ultimate
+    }
+}
+
+impl Report {
+    /// Whether some rule of detailing is broken.
+    #[must_use]
+    pub fn breached(&self) -> bool {
+        self.findings.iter().any(|finding| finding.grade == Grade::Breach)
+    }
+
+    /// Whether the joint holds: no answer for some case is graver than an excess or breach, which is graver
+    /// than satisfaction.
+    #[must_use]
+    pub fn verdict(&self) -> Status {
+        let any = |status: Status| self.cases.iter().any(|case| case.status == status);
+        if any(Status::NotSolved) {
+            Status::NotSolved
+        } else if any(Status::Exceeded) || self.breached() {
+            Status::Exceeded
+        } else {
+            Status::Satisfied
+        }
+    }
+}

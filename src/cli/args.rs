@@ -1,0 +1,184 @@
+//! The arguments: commands, options and their help.
+
+use clap::{Args, Parser, Subcommand, ValueEnum};
+use std::path::PathBuf;
+
+/// Shown by `--help`: what the program is for and what it leaves to the reader.
+const ABOUT: &str = "\
+Strength of eccentrically loaded fillet weld groups by the instantaneous-centre method, beside the elastic \
+vector method.
+
+Static strength of fillet welds between parts taken as rigid; no fatigue, brittle fracture, lamellar tearing \
+or seismic detailing. Results support, and do not replace, the judgement of a licensed engineer under the code \
+in force.";
+
+const EXAMPLES: &str = "\
+Examples:
+  weldpole check --demo                 verify the built-in demonstration joint
+  weldpole new -o bracket.toml          write a commented starter file
+  weldpole check bracket.toml           verify it
+  weldpole rules                        list the rule sets and laws
+
+Exit status: 0 every verification satisfied; 1 some verification exceeded or rule of detailing
+broken; 2 no answer for at least one joint. 2 outweighs 1, 1 outweighs 0.";
+
+const CHECK_EXAMPLES: &str = "\
+Examples:
+  weldpole check bracket.toml
+  weldpole check --format json -o results.json joints/*.toml
+  weldpole check --set b=140mm --set 'e=b + 250 mm' bracket.toml
+  weldpole check --elements 100 --law lesik-kennedy --elements-csv elements.csv bracket.toml
+  generator | weldpole check --format csv -
+
+Exit status: 0 every verification satisfied; 1 some verification exceeded or rule of detailing
+broken; 2 no answer for at least one joint. 2 outweighs 1, 1 outweighs 0.";
+
+/// The command line.
+#[derive(Debug, Parser)]
+#[command(name = "weldpole", version, about, long_about = ABOUT, after_help = EXAMPLES, arg_required_else_help = true)]
+pub(super) struct Arguments {
+    /// What to do.
+    #[command(subcommand)]
+    pub(super) command: Command,
+}
+
+/// What can be asked for.
+#[derive(Debug, Subcommand)]
+pub(super) enum Command {
+    /// Verify joints: ultimate and elastic strength, utilisation, verdict
+    #[command(after_help = CHECK_EXAMPLES)]
+    Check(CheckArguments),
+    /// List rule sets and load-deformation laws, or show one with its clauses
+    Rules(RulesArguments),
+    /// Write a commented starter file
+    New(NewArguments),
+}
+
+/// Arguments of `check`.
+#[derive(Debug, Args)]
+pub(super) struct CheckArguments {
+    /// Joint files; `-` is standard input
+    #[arg(value_name = "FILES", required_unless_present = "demo")]
+    pub(super) files: Vec<PathBuf>,
+    /// Verify the built-in demonstration joint instead of files
+    #[arg(long, conflicts_with = "files")]
+    pub(super) demo: bool,
+    /// Form of the results
+    #[arg(long, value_enum, default_value_t = CheckFormat::Text)]
+    pub(super) format: CheckFormat,
+    /// Write the results to FILE instead of standard output; `-` is standard output
+    #[arg(short, long, value_name = "FILE")]
+    pub(super) output: Option<PathBuf>,
+    /// Write the element table (forces of every piece of weld) to FILE; with `-` it takes the place of the
+    /// results on standard output
+    #[arg(long, value_name = "FILE")]
+    pub(super) elements_csv: Option<PathBuf>,
+    /// Give a parameter of the joint files another value; repeatable
+    #[arg(long, value_name = "NAME=VALUE", value_parser = assignment)]
+    pub(super) set: Vec<(String, String)>,
+    /// Mid-point elements on the longest run instead of the continuous weld
+    #[arg(long, value_name = "N", value_parser = at_least_one)]
+    pub(super) elements: Option<usize>,
+    /// Load-deformation law, by its id
+    #[arg(long, value_name = "ID")]
+    pub(super) law: Option<String>,
+    /// Rule set, by its id
+    #[arg(long, value_name = "ID")]
+    pub(super) rules: Option<String>,
+    /// Show every load case in detail, not the governing one only
+    #[arg(long)]
+    pub(super) all_cases: bool,
+    /// Columns of the text, at least 72 [default: the variable COLUMNS, else 80]
+    #[arg(long, value_name = "N", value_parser = clap::value_parser!(u16).range(1..=1000))]
+    pub(super) width: Option<u16>,
+}
+
+/// Arguments of `rules`.
+#[derive(Debug, Args)]
+pub(super) struct RulesArguments {
+    /// One rule set or law to show in full
+    #[arg(value_name = "ID")]
+    pub(super) id: Option<String>,
+    /// Form of the list
+    #[arg(long, value_enum, default_value_t = RulesFormat::Text)]
+    pub(super) format: RulesFormat,
+    /// Write to FILE instead of standard output
+    #[arg(short, long, value_name = "FILE")]
+    pub(super) output: Option<PathBuf>,
+    /// Columns of the text, at least 72 [default: the variable COLUMNS, else 80]
+    #[arg(long, value_name = "N", value_parser = clap::value_parser!(u16).range(1..=1000))]
+    pub(super) width: Option<u16>,
+}
+
+/// Arguments of `new`.
+#[derive(Debug, Args)]
+pub(super) struct NewArguments {
+    /// The demonstration joint instead of the commented starter
+    #[arg(long)]
+    pub(super) demo: bool,
+    /// Write to FILE instead of standard output; an existing file is left alone
+    #[arg(short, long, value_name = "FILE")]
+    pub(super) output: Option<PathBuf>,
+    /// Replace an existing file
+    #[arg(long)]
+    pub(super) force: bool,
+}
+
+/// Form of the results of `check`.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(super) enum CheckFormat {
+    /// For people
+    Text,
+    /// For programs: schema weldpole.check/1
+    Json,
+    /// For spreadsheets: one row per load case
+    Csv,
+}
+
+/// Form of the results of `rules`.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(super) enum RulesFormat {
+    /// For people
+    Text,
+    /// For programs
+    Json,
+}
+
+/// `NAME=VALUE`.
+fn assignment(text: &str) -> Result<(String, String), String> {
+    let refusal = || "a parameter is set as NAME=VALUE, for example b=140mm".to_owned();
+    let (name, value) = text.split_once('=').ok_or_else(refusal)?;
+    let (name, value) = (name.trim(), value.trim());
+    if name.is_empty() || value.is_empty() {
+        return Err(refusal());
+    }
+    Ok((name.to_owned(), value.to_owned()))
+}
+
+/// A count of elements.
+fn at_least_one(text: &str) -> Result<usize, String> {
+    match text.parse() {
+        Ok(count) if count >= 1 => Ok(count),
+        Ok(_) | Err(_) => Err("a whole number of at least 1 is accepted".to_owned()),
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use clap::CommandFactory;
+
+    #[test]
+    fn the_definition_is_consistent() {
+        Arguments::command().debug_assert();
+    }
+
+    #[test]
+    fn an_assignment_needs_a_name_and_a_value() {
+        assert_eq!(assignment("b = 140 mm"), Ok(("b".to_owned(), "140 mm".to_owned())));
+        assert_eq!(assignment("e=a=b"), Ok(("e".to_owned(), "a=b".to_owned())));
+        for refused in ["b", "=3", "b=", ""] {
+            assert!(assignment(refused).is_err(), "{refused}");
+        }
+    }
+}

@@ -1,0 +1,122 @@
+//! The command `check`: files to verdicts.
+
+use super::args::{CheckArguments, CheckFormat};
+use super::destination::Destination;
+use super::exit::Exit;
+use super::source::{Source, fault};
+use super::{VERSION, colour, message};
+use weldpole::analysis::{Report, analyse};
+use weldpole::diagnostic::Diagnostic;
+use weldpole::input::{Options, read_joint};
+use weldpole::output::{check_json, check_text, elements_csv, summary_csv};
+
+/// Verifies every joint, also those after a bad one, and writes the results.
+pub(super) fn run(arguments: &CheckArguments) -> Exit {
+    let columns = colour::columns(arguments.width);
+    if let Err(refusal) = destinations_are_safe(arguments) {
+        message::refuse(&refusal, columns);
+        return Exit::NoAnswer;
+    }
+    let (reports, faults) = reports(arguments, columns);
+    let mut exit = reports.iter().map(|report| Exit::from(report.verdict())).max().unwrap_or(Exit::Satisfied);
+    let count = sources(arguments).len();
+    if reports.len() < count {
+        exit = Exit::NoAnswer;
+        if count > 1 {
+            message::notice(&format!("{} of {count} files gave no answer", count - reports.len()));
+        }
+    }
+    for outcome in write(arguments, &reports, &faults) {
+        if let Err(refusal) = outcome {
+            message::refuse(&refusal, columns);
+            exit = Exit::NoAnswer;
+        }
+    }
+    exit
+}
+
+fn sources(arguments: &CheckArguments) -> Vec<Source> {
+    if arguments.demo {
+        vec![Source::Demonstration]
+    } else {
+        arguments.files.iter().map(Source::from).collect()
+    }
+}
+
+/// Refuses to write over a joint file or over another result, and to read standard input twice.
+fn destinations_are_safe(arguments: &CheckArguments) -> Result<(), Box<Diagnostic>> {
+    for path in [&arguments.output, &arguments.elements_csv].into_iter().flatten() {
+        let destination = Destination::from(Some(path));
+        if arguments.files.iter().any(|file| destination.is_file(file)) {
+            let message = "the results would replace a joint file";
+            return Err(fault(&path.display().to_string(), message, Some("choose another name")));
+        }
+    }
+    if let (Some(results), Some(elements)) = (&arguments.output, &arguments.elements_csv)
+        && (Destination::from(Some(results)).is_file(elements)
+            || (results.as_os_str() == "-" && elements.as_os_str() == "-"))
+    {
+        let message = "the element table and the results cannot share one destination";
+        return Err(fault(&results.display().to_string(), message, Some("choose another name")));
+    }
+    if arguments.files.iter().filter(|file| file.as_os_str() == "-").count() > 1 {
+        return Err(fault("-", "standard input can be read only once", None));
+    }
+    Ok(())
+}
+
+/// The reports of all joints that could be read, and the faults of the others, already shown.
+fn reports(arguments: &CheckArguments, columns: usize) -> (Vec<Report>, Vec<Diagnostic>) {
+    let options = Options {
+        set: arguments.set.clone(),
+        elements: arguments.elements,
+        law: arguments.law.clone(),
+        rules: arguments.rules.clone(),
+    };
+    let (mut reports, mut faults) = (Vec::new(), Vec::new());
+    for source in sources(arguments) {
+        let (text, outcome) = match source.read() {
+            Ok(text) => {
+                let outcome = read_joint(&text.name, &text.contents, &options);
+                (Some(text), outcome)
+            }
+            Err(refusal) => (None, Err(vec![*refusal])),
+        };
+        match outcome {
+            Ok(joint) => reports.push(analyse(&joint)),
+            Err(found) => {
+                message::show(&found, text.as_ref(), columns);
+                faults.extend(found);
+            }
+        }
+    }
+    (reports, faults)
+}
+
+/// Writes the results and the element table; the outcome of each.
+fn write(
+    arguments: &CheckArguments,
+    reports: &[Report],
+    faults: &[Diagnostic],
+) -> Vec<Result<(), Box<Diagnostic>>> {
+    let results = Destination::from(arguments.output.as_ref());
+    let elements = arguments.elements_csv.as_ref().map(|path| Destination::from(Some(path)));
+    let mut outcomes = Vec::new();
+    let table_takes_standard_output =
+        elements == Some(Destination::StandardOutput) && results == Destination::StandardOutput;
+    // Without a report only the JSON has something to say.
+    if !table_takes_standard_output && (!reports.is_empty() || arguments.format == CheckFormat::Json) {
+        outcomes.push(match arguments.format {
+            CheckFormat::Text => {
+                let layout = colour::layout(arguments.width, arguments.all_cases, &results);
+                results.write_text(&check_text(reports, &layout))
+            }
+            CheckFormat::Json => results.write(&check_json(VERSION, reports, faults)),
+            CheckFormat::Csv => results.write(&summary_csv(reports)),
+        });
+    }
+    if let Some(elements) = elements.filter(|_| !reports.is_empty()) {
+        outcomes.push(elements.write(&elements_csv(reports)));
+    }
+    outcomes
+}

@@ -1,0 +1,96 @@
+//! The words of the text for people: verdicts, bases, titles.
+
+use crate::analysis::{Analyses, CaseReport, Report, Status};
+use crate::model::{Basis, Confirmation, Discretisation, Joint};
+use crate::output::layout::Emphasis;
+use crate::output::number::{MISSING, utilisation};
+
+/// The verdict on a joint in capitals.
+pub(super) fn verdict(report: &Report) -> (&'static str, Emphasis) {
+    let exceeded = report.cases.iter().any(|case| case.status == Status::Exceeded);
+    let status = report.verdict();
+    if status == Status::Exceeded && !exceeded {
+        ("BREACH", Emphasis::Exceeded)
+    } else {
+        (status_in_capitals(status), status_emphasis(status))
+    }
+}
+
+fn status_in_capitals(status: Status) -> &'static str {
+    match status {
+        Status::Satisfied => "SATISFIED",
+        Status::Exceeded => "EXCEEDED",
+        Status::NotSolved => "NOT SOLVED",
+    }
+}
+
+/// A status in a table.
+pub(super) fn status(status: Status) -> &'static str {
+    match status {
+        Status::Satisfied => "satisfied",
+        Status::Exceeded => "exceeded",
+        Status::NotSolved => "not solved",
+    }
+}
+
+/// How a status is emphasised.
+pub(super) fn status_emphasis(status: Status) -> Emphasis {
+    match status {
+        Status::Satisfied => Emphasis::Satisfied,
+        Status::Exceeded => Emphasis::Exceeded,
+        Status::NotSolved => Emphasis::NotSolved,
+    }
+}
+
+/// The name of an analysis.
+pub(super) fn basis(basis: Basis) -> &'static str {
+    match basis {
+        Basis::Ultimate => "instantaneous centre",
+        Basis::Elastic => "elastic vector",
+        Basis::Concentric => "concentric rule",
+    }
+}
+
+/// How far values are confirmed.
+pub(super) fn confirmation(status: Confirmation) -> &'static str {
+    match status {
+        Confirmation::Read => "values read in the published text",
+        Confirmation::Recalled => "some values recalled: confirm them against the text",
+    }
+}
+
+/// How the welds are integrated.
+pub(super) fn discretisation(joint: &Joint) -> String {
+    match joint.discretisation {
+        Discretisation::Continuous => "continuous".to_owned(),
+        Discretisation::Elements(count) => format!("{count} mid-point elements on the longest run"),
+    }
+}
+
+/// The title of a joint, or its file where it has none.
+pub(super) fn title(report: &Report) -> &str {
+    if report.joint.title.is_empty() { &report.joint.file } else { &report.joint.title }
+}
+
+/// The governing case: the one that decides, or the first that has no answer.
+pub(super) fn governing_case(report: &Report) -> Option<&CaseReport> {
+    let unsolved = || report.cases.iter().find(|case| case.status == Status::NotSolved);
+    report.governing.and_then(|index| report.cases.get(index)).or_else(unsolved)
+}
+
+/// The utilisation of a case: 0 without load, a dash without answer.
+pub(super) fn case_utilisation(case: &CaseReport) -> String {
+    match (&case.analyses, &case.verification) {
+        (_, Some(verification)) => {
+            let exceeded = case.governing_check().is_some_and(|check| check.accepted && !check.satisfied);
+            utilisation(verification.utilisation, exceeded)
+        }
+        (Analyses::Unloaded, None) => utilisation(0.0, false),
+        (Analyses::Loaded { .. }, None) => MISSING.to_owned(),
+    }
+}
+
+/// The utilisation of the governing case.
+pub(super) fn governing_utilisation(report: &Report) -> String {
+    governing_case(report).map_or_else(|| MISSING.to_owned(), case_utilisation)
+}
