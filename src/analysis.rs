@@ -1,13 +1,20 @@
-//! The whole calculation of one joint, from a [`Joint`] to a [`Report`].
+//! The whole calculation of one joint, from a [`Joint`] to a [`Report`]: [`analyse`] is the pipeline.
+//!
+//! joint -> plane group -> per case: elastic and ultimate analysis -> checks -> verification -> element table
+//! -> findings. The methods, their equations and sources are described in `mechanics`, `solvers` and `verify`.
 
 mod comparison;
-
-pub use comparison::Strength;
-
-use crate::model::{Basis, Confirmation, Joint, Vector, Wrench};
-use crate::solvers::{Elastic, NotSolved, Ultimate};
+mod elements;
+mod findings;
+mod pipeline;
 
 pub use crate::mechanics::Section;
+pub use crate::verify::{Check, Verification};
+pub use comparison::{Coefficients, Strength};
+pub use pipeline::{analyse, analyse_with};
+
+use crate::model::{Joint, Vector, Wrench};
+use crate::solvers::{Elastic, NotSolved, Ultimate};
 
 /// Whether a case holds.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -18,50 +25,6 @@ pub enum Status {
     Exceeded,
     /// No answer.
     NotSolved,
-}
-
-/// One verification.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Check {
-    /// Identifier, for example `instantaneous-centre`.
-    pub id: String,
-    /// The analysis it rests on.
-    pub basis: Basis,
-    /// Clause.
-    pub clause: String,
-    /// What is checked, in words.
-    pub subject: String,
-    /// Nominal load factor: multiplies the given load to reach the nominal strength.
-    pub load_factor: f64,
-    /// Load factor to the design strength.
-    pub design_load_factor: f64,
-    /// Size of the given load: resultant force, N, or moment about the centroid, N mm, where there is no force.
-    pub demand: f64,
-    /// Design strength in the same unit.
-    pub resistance: f64,
-    /// True when demand and resistance are moments.
-    pub in_moment: bool,
-    /// 1 / `design_load_factor`.
-    pub utilisation: f64,
-    /// Relative error estimate of the load factor.
-    pub error_estimate: f64,
-    /// Whether it is satisfied, error estimate included.
-    pub satisfied: bool,
-    /// Whether the code accepts it as the verification; information only otherwise.
-    pub accepted: bool,
-    /// Whether the numbers of the rule set were read or recalled.
-    pub values: Confirmation,
-}
-
-/// The verification that decides a case.
-#[derive(Debug, Clone, PartialEq)]
-pub struct Verification {
-    /// Basis.
-    pub basis: Basis,
-    /// Identifier of the governing row of `checks`.
-    pub check: String,
-    /// Utilisation.
-    pub utilisation: f64,
 }
 
 /// Forces on one element (reporting cell) of the weld at the given load, about the weld centroid.
@@ -155,15 +118,6 @@ pub struct Finding {
     pub subject: String,
     /// One or two sentences.
     pub message: String,
-}
-
-/// The dimensionless result where one size and filler serve all welds.
-#[derive(Debug, Clone, Copy, PartialEq)]
-pub struct Coefficients {
-    /// Ultimate resultant over `longitudinal strength x length of weld`.
-    pub mean_strength: f64,
-    /// Handbook coefficient C = R_n / (D l), l the longest run, D in sixteenths of an inch, E70: kip/in.
-    pub handbook: f64,
 }
 
 /// Everything about one joint.

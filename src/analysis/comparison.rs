@@ -10,7 +10,7 @@
 //! design strength and utilisation do not exist.
 
 use super::{Analyses, CaseReport, Check, Grade, Report, Status};
-use crate::model::{Basis, RuleSet};
+use crate::model::{Basis, Joint, RuleSet};
 use crate::solvers::{Elastic, NotSolved, Ultimate};
 
 /// What one method says about the strength of the group under the load of one case.
@@ -29,6 +29,19 @@ impl Strength {
         self.design_load_factor.map(|factor| 1.0 / factor)
     }
 }
+
+/// The dimensionless result where one size and filler serve all welds.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Coefficients {
+    /// Ultimate resultant over the longitudinal strength of the whole length of weld.
+    pub mean_strength: f64,
+    /// Handbook coefficient `C = R_n / (D l)`, kip/in: l the longest run, D the leg in sixteenths of an inch, as
+    /// for E70 filler; `None` for welds without equal legs.
+    pub handbook: Option<f64>,
+}
+
+/// Longitudinal strength of a 1/16 in fillet of E70: `0.60 x 70 ksi x (1/16 in) / sqrt 2`, kip/in.
+const KIP_PER_INCH_OF_SIXTEENTH: f64 = 0.60 * 70.0 / 16.0 * std::f64::consts::FRAC_1_SQRT_2;
 
 impl CaseReport {
     /// The answer of the ultimate analysis, if there is one.
@@ -85,6 +98,21 @@ impl CaseReport {
     #[must_use]
     pub fn load_times(&self, factor: f64) -> Option<(f64, bool)> {
         self.checks.first().map(|check| (check.demand * factor, check.in_moment))
+    }
+
+    /// Strength coefficients, where the load has a force and one weld size and filler serve all welds.
+    #[must_use]
+    pub fn coefficients(&self, joint: &Joint) -> Option<Coefficients> {
+        let weld = joint.group.uniform()?;
+        let resultant = self.load.force.norm() * self.ultimate()?.governing().load_factor;
+        let per_length = joint.rules.longitudinal.value * weld.filler.strength * weld.size.throat();
+        let length: f64 = joint.group.welds().iter().map(|weld| weld.length() * f64::from(weld.sides)).sum();
+        let leg = weld.size.leg().filter(|_| weld.size.legs().is_some_and(|[a, b]| a == b));
+        (resultant > 0.0).then(|| Coefficients {
+            mean_strength: resultant / (per_length * length),
+            handbook: leg
+                .map(|_| KIP_PER_INCH_OF_SIXTEENTH * resultant / (per_length * joint.group.longest_run())),
+        })
     }
 
     /// The check that decides the case.

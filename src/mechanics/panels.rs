@@ -74,11 +74,17 @@ pub(super) struct Panels {
 }
 
 impl Panels {
-    /// Cuts a piece for the motion `q`.
-    pub(super) fn cut(&mut self, group: &PlaneGroup, piece: &Piece, q: &Triple, quadrature: &Quadrature) {
+    /// Cuts the part `(low, high)` of a piece for the motion `q`.
+    pub(super) fn cut(
+        &mut self,
+        group: &PlaneGroup,
+        piece: &Piece,
+        q: &Triple,
+        (low, high): (f64, f64),
+        quadrature: &Quadrature,
+    ) {
         self.cuts.clear();
         self.feet.clear();
-        let (low, high) = piece.range();
         self.cuts.push(low);
         match piece.shape {
             Shape::Straight { from, tangent, .. } => {

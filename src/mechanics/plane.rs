@@ -180,7 +180,7 @@ pub fn cell_count(run: &Run, count: usize, longest: f64) -> usize {
 
 /// A count as a float; counts of elements stay far below 2^53.
 #[expect(clippy::cast_precision_loss, reason = "counts of elements are far below 2^53")]
-pub(crate) fn as_float(count: usize) -> f64 {
+pub(super) fn as_float(count: usize) -> f64 {
     count as f64
 }
 

@@ -21,7 +21,7 @@ use super::plane::{PlaneGroup, Triple, along_and_across, displacement};
 use nalgebra::{Matrix3, Vector2};
 
 /// A wrench and its tangent.
-#[derive(Debug, Clone, Copy, PartialEq)]
+#[derive(Debug, Clone, Copy, Default, PartialEq)]
 pub struct Resultant {
     /// (F_x, F_y, M / rho), N.
     pub wrench: Triple,
@@ -33,7 +33,7 @@ impl PlaneGroup {
     /// The wrench that the motion `q` carries, by quadrature or by the group's elements.
     #[must_use]
     pub fn resultant(&self, q: &Triple, quadrature: &Quadrature) -> Resultant {
-        let mut sum = Resultant { wrench: Triple::zeros(), tangent: Matrix3::zeros() };
+        let mut sum = Resultant::default();
         if !self.elements.is_empty() {
             for element in &self.elements {
                 sum.add(self, q, &element.at, &element.tangent, element.strength, element.size);
@@ -42,7 +42,7 @@ impl PlaneGroup {
         }
         let mut panels = Panels::default();
         for piece in &self.pieces {
-            panels.cut(self, piece, q, quadrature);
+            panels.cut(self, piece, q, piece.range(), quadrature);
             let strength = piece.strength * piece.stretch();
             panels.visit(&quadrature.rule, |parameter, weight| {
                 let (at, tangent) = piece.frame(parameter);
@@ -55,7 +55,7 @@ impl PlaneGroup {
 
 impl Resultant {
     /// Adds the force of a stretch of weld of longitudinal strength `strength` (N) at a point.
-    fn add(
+    pub(super) fn add(
         &mut self,
         group: &PlaneGroup,
         q: &Triple,

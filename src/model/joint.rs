@@ -69,6 +69,8 @@ pub struct Joint {
     pub cases: Vec<LoadCase>,
     /// True when there are combinations; false when the cases are taken as factored already.
     pub combined: bool,
+    /// Names of the load cases that no combination uses; empty without combinations.
+    pub unused_cases: Vec<String>,
     /// Title block.
     pub document: Document,
 }

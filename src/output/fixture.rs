@@ -81,6 +81,7 @@ fn joint() -> Joint {
         group: WeldGroup::new(vec![weld("back", 8.0, 0.0), weld("front", 6.0, 80.0)]).unwrap(),
         cases: vec![crane],
         combined: false,
+        unused_cases: Vec::new(),
         document: Document::default(),
     }
 }

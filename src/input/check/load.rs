@@ -18,8 +18,12 @@ const LOADS_IN_SPACE: &str = "loads in space are not solved yet";
 /// Greatest load factor accepted in a combination.
 const LARGEST_FACTOR: f64 = 1e4;
 
-/// What has to be verified, and whether it comes from combinations.
-pub(super) fn cases(schema: &File, values: &Values<'_>, faults: &mut Faults<'_>) -> (Vec<LoadCase>, bool) {
+/// What has to be verified, and the names of the cases that no combination uses.
+pub(super) fn cases(
+    schema: &File,
+    values: &Values<'_>,
+    faults: &mut Faults<'_>,
+) -> (Vec<LoadCase>, Vec<String>) {
     let mut cases: Vec<LoadCase> = Vec::new();
     for entry in &schema.loads {
         let wrench = wrench(entry, values, faults);
@@ -30,7 +34,7 @@ pub(super) fn cases(schema: &File, values: &Values<'_>, faults: &mut Faults<'_>)
         }
     }
     if schema.combinations.is_empty() {
-        return (cases, false);
+        return (cases, Vec::new());
     }
     let names = schema.combinations.iter().filter_map(|combination| combination.name.value());
     material::unique(names, "combinations", faults);
@@ -39,7 +43,12 @@ pub(super) fn cases(schema: &File, values: &Values<'_>, faults: &mut Faults<'_>)
         .iter()
         .filter_map(|entry| combination(entry, schema, &cases, values, faults))
         .collect();
-    (combined, true)
+    let used = |case: &LoadCase| {
+        let mut factors = schema.combinations.iter().flat_map(|entry| &entry.factors);
+        factors.any(|(name, _)| name.value == case.name)
+    };
+    let unused = cases.iter().filter(|case| !used(case)).map(|case| case.name.clone()).collect();
+    (combined, unused)
 }
 
 /// The load about the origin.

@@ -44,7 +44,8 @@ pub(super) fn joint(
     };
     let plates = material::plates(&schema.plates, &values, faults);
     let welds = weld::welds(schema, &filler, &values, faults);
-    let (cases, combined) = load::cases(schema, &values, faults);
+    let (cases, unused_cases) = load::cases(schema, &values, faults);
+    let combined = !schema.combinations.is_empty();
     if !faults.is_empty() {
         return None;
     }
@@ -68,6 +69,7 @@ pub(super) fn joint(
         group,
         cases,
         combined,
+        unused_cases,
         document: schema.document.clone(),
     })
 }

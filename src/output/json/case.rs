@@ -102,7 +102,7 @@ struct NotSolvedJson {
 #[derive(Serialize)]
 struct CoefficientsJson {
     mean_strength: Number,
-    handbook: Number,
+    handbook: Option<Number>,
 }
 
 /// 0 where there is no load to resist; otherwise the value.
@@ -139,7 +139,7 @@ impl<'a> CaseJson<'a> {
             not_solved: case.not_solved().map(NotSolvedJson::from),
             coefficients: case.coefficients(joint).map(|coefficients| CoefficientsJson {
                 mean_strength: Number(coefficients.mean_strength),
-                handbook: Number(coefficients.handbook),
+                handbook: coefficients.handbook.map(Number),
             }),
         }
     }

@@ -203,11 +203,15 @@ fn states(answer: &Ultimate, units: UnitSystem) -> Vec<String> {
 
 /// The dimensionless results.
 fn coefficients(coefficients: Coefficients) -> String {
+    let handbook = coefficients.handbook.map_or_else(String::new, |handbook| {
+        format!(
+            "; handbook C = {} kip/in (E70, per sixteenth of an inch of leg, on the longest run)",
+            people(handbook)
+        )
+    });
     format!(
-        "Coefficients: mean strength {} of the longitudinal strength; handbook C = {} kip/in (E70, per \
-         sixteenth of an inch of leg, on the longest run).",
-        people(coefficients.mean_strength),
-        people(coefficients.handbook)
+        "Coefficients: mean strength {} of the longitudinal strength{handbook}.",
+        people(coefficients.mean_strength)
     )
 }
 
@@ -268,7 +272,7 @@ mod tests {
 
     #[test]
     fn coefficients_name_their_constants() {
-        let text = coefficients(Coefficients { mean_strength: 1.234_56, handbook: 3.725_12 });
+        let text = coefficients(Coefficients { mean_strength: 1.234_56, handbook: Some(3.725_12) });
         assert!(text.contains("mean strength 1.235") && text.contains("C = 3.725 kip/in"), "{text}");
     }
 }
