@@ -3,6 +3,7 @@
 #![allow(clippy::cast_precision_loss, clippy::cast_possible_truncation, clippy::cast_sign_loss)]
 #![allow(clippy::unwrap_used, clippy::panic, clippy::print_stdout)]
 
+mod architecture;
 #[cfg(feature = "cli")]
 mod cli;
 mod diagnostics;
