@@ -33,8 +33,8 @@ fn about_case(case: &CaseReport) -> Vec<Finding> {
         say(
             Grade::Caution,
             format!(
-                "the ultimate strength is {ratio:.3} of the elastic one: the welds differ so much in the deformation \
-                 they can take that the first rupture comes before the others are fully used"
+                "the ultimate strength is {ratio:.3} of the elastic one: the first point ruptures before the rest of \
+                 the weld is fully used, or late on the falling part of its curve"
             ),
         );
     }

@@ -9,7 +9,7 @@
 //! | - | `Cell::range` | scaled length or rad | the part of the piece the cell covers |
 //! | r | [`LocalState::force_per_length`] | N/mm | strength used per length at the middle, all sides |
 
-use super::law::{response, rupture_limit};
+use super::law::{Direction, response, rupture_limit};
 use super::panels::{Panels, Quadrature};
 use super::plane::{PlaneGroup, Shape, Triple, along_and_across, as_float, cell_count, displacement};
 use super::resultant::Resultant;
@@ -115,14 +115,12 @@ impl PlaneGroup {
         let u = displacement(q, &at);
         let deformation = u.norm();
         let (along, across) = along_and_across(&u, &tangent);
-        let angle = across.abs().atan2(along.abs());
+        let direction = Direction::of(along, across);
+        let angle = direction.angle;
         let limit = rupture_limit(&self.law, angle);
-        let share = if deformation > 0.0 {
-            response(&self.law, angle, (across.abs() / deformation).min(1.0), deformation / piece.size)
-                .strength
-        } else {
-            0.0
-        };
+        let moves = deformation > 0.0;
+        let share =
+            if moves { response(&self.law, &direction, deformation / piece.size).strength } else { 0.0 };
         LocalState {
             angle,
             deformation,

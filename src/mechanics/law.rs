@@ -34,12 +34,41 @@ pub struct Response {
     pub by_angle: f64,
 }
 
-/// Evaluates a law at `angle` (rad, with its sine given) and `deformation` (over w, positive).
+/// Direction of a displacement against the weld axis.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct Direction {
+    /// theta, rad, 0 to pi/2.
+    pub angle: f64,
+    /// sin theta.
+    pub sine: f64,
+    /// cos theta.
+    pub cosine: f64,
+    /// d theta / d phi, phi the direction of the displacement in the plane: +1 or -1.
+    pub sense: f64,
+}
+
+impl Direction {
+    /// The direction of the displacement with the given components along and across the weld axis, not both
+    /// zero.
+    #[must_use]
+    pub fn of(along: f64, across: f64) -> Self {
+        let length = (along * along + across * across).sqrt();
+        Self {
+            angle: across.abs().atan2(along.abs()),
+            sine: (across.abs() / length).min(1.0),
+            cosine: (along.abs() / length).min(1.0),
+            sense: if (along >= 0.0) == (across >= 0.0) { 1.0 } else { -1.0 },
+        }
+    }
+}
+
+/// Evaluates a law for a displacement of the given direction and size (over w, positive).
 #[must_use]
-pub fn response(law: &Law, angle: f64, sine: f64, deformation: f64) -> Response {
+pub fn response(law: &Law, direction: &Direction, deformation: f64) -> Response {
+    let angle = direction.angle;
     match &law.form {
         LawForm::LesikKennedy { directional, curve, peak, .. } => {
-            lesik_kennedy(directional, curve, peak, angle, sine, deformation)
+            lesik_kennedy(directional, curve, peak, direction, deformation)
         }
         LawForm::ButlerPalKulak { numerator, denominator, mu, lambda, test_leg, .. } => {
             let theta = angle.to_degrees();
@@ -63,7 +92,7 @@ pub fn response(law: &Law, angle: f64, sine: f64, deformation: f64) -> Response 
             }
         }
         LawForm::RigidPlastic { directional } => {
-            let (strength, by_angle) = directional_strength(directional, angle, sine);
+            let (strength, by_angle) = directional_strength(directional, direction);
             Response { strength, by_deformation: 0.0, by_angle }
         }
         LawForm::Table(table) => table_law::response(table, angle, deformation),
@@ -140,14 +169,13 @@ fn lesik_kennedy(
     directional: &Directional,
     curve: &Curve,
     peak: &PowerOfAngle,
-    angle: f64,
-    sine: f64,
+    direction: &Direction,
     deformation: f64,
 ) -> Response {
-    let (delta_m, delta_m_slope) = power_of_angle(peak, angle);
+    let (delta_m, delta_m_slope) = power_of_angle(peak, direction.angle);
     let p = deformation / delta_m;
     let (f, f_slope) = curve_value(curve, p);
-    let (k, k_slope) = directional_strength(directional, angle, sine);
+    let (k, k_slope) = directional_strength(directional, direction);
     Response {
         strength: k * f,
         by_deformation: k * f_slope / delta_m,
@@ -156,9 +184,12 @@ fn lesik_kennedy(
 }
 
 /// `1 + a sin^1.5 theta` and its derivative by theta.
-fn directional_strength(directional: &Directional, angle: f64, sine: f64) -> (f64, f64) {
-    let root = sine.sqrt();
-    (1.0 + directional.amplitude * sine * root, 1.5 * directional.amplitude * root * angle.cos())
+fn directional_strength(directional: &Directional, direction: &Direction) -> (f64, f64) {
+    let root = direction.sine.sqrt();
+    (
+        1.0 + directional.amplitude * direction.sine * root,
+        1.5 * directional.amplitude * root * direction.cosine,
+    )
 }
 
 /// `c (theta + o)^e` with theta in degrees, and its derivative per rad.

@@ -162,10 +162,12 @@ impl PlaneGroup {
         Triple::new(load.force.x, load.force.y, load.moment.z / self.gyration)
     }
 
-    /// The unscaled coordinates of a scaled point, mm.
+    /// The unscaled coordinates of a scaled point, mm; what scaling to and fro leaves of a zero is zero.
     #[must_use]
     pub fn unscaled(&self, at: Vector2<f64>) -> Vector {
-        self.section.centroid + Vector::new(at.x, at.y, 0.0) * self.gyration
+        let point = self.section.centroid + Vector::new(at.x, at.y, 0.0) * self.gyration;
+        let rounding = 16.0 * f64::EPSILON * (self.section.centroid.norm() + self.gyration * at.norm());
+        point.map(|coordinate| if coordinate.abs() <= rounding { 0.0 } else { coordinate })
     }
 }
 

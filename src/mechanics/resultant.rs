@@ -15,7 +15,7 @@
 //!
 //! At a point that does not move the force is zero; its tangent, infinite there but integrable, is left out.
 
-use super::law::response;
+use super::law::{Direction, response};
 use super::panels::{Panels, Quadrature};
 use super::plane::{PlaneGroup, Triple, along_and_across, displacement};
 use nalgebra::{Matrix3, Vector2};
@@ -70,17 +70,15 @@ impl Resultant {
             return;
         }
         let (along, across) = along_and_across(&u, tangent);
-        let angle = across.abs().atan2(along.abs());
-        let sine = (across.abs() / length).min(1.0);
-        let local = response(&group.law, angle, sine, length / size);
+        let direction = Direction::of(along, across);
+        let local = response(&group.law, &direction, length / size);
         let e = u / length;
         let force = e * (strength * local.strength);
         self.wrench += lever(at, &force);
         // Columns of df/du applied to B = [1 0 -y; 0 1 x].
         let stiffness_along = strength * local.by_deformation / size;
         let stiffness_turn = strength * local.strength / length;
-        let sigma = if (along >= 0.0) == (across >= 0.0) { 1.0 } else { -1.0 };
-        let coupling = sigma * strength * local.by_angle / length;
+        let coupling = direction.sense * strength * local.by_angle / length;
         let n = Vector2::new(-e.y, e.x);
         // Row vectors e^T B and n^T B.
         let e_b = Triple::new(e.x, e.y, at.x * e.y - at.y * e.x);

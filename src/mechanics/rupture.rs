@@ -14,7 +14,7 @@
 //! a ridge; the place moves with q so that u_t stays zero, and the gradient follows it).
 //! For a law without limit `g = |q|`, a mere normalisation.
 
-use super::law::rupture_limit;
+use super::law::{Direction, rupture_limit};
 use super::plane::{Piece, PlaneGroup, Shape, Triple, along_and_across, displacement};
 use crate::numerics::maximise;
 use nalgebra::Vector2;
@@ -102,14 +102,13 @@ impl PlaneGroup {
             return None;
         }
         let (along, across) = along_and_across(&u, tangent);
-        let angle = across.abs().atan2(along.abs());
+        let Direction { angle, sense, .. } = Direction::of(along, across);
         let (limit, limit_slope) = rupture_limit(&self.law, angle).unwrap_or((1.0, 0.0));
         let ratio = deformation / (size * limit);
         // d theta / du = sigma n / |u|, n the normal of u.
-        let sigma = if (along >= 0.0) == (across >= 0.0) { 1.0 } else { -1.0 };
         let e = u / deformation;
         let by_u = e * (ratio / deformation)
-            - Vector2::new(-e.y, e.x) * (ratio * limit_slope / limit * sigma / deformation);
+            - Vector2::new(-e.y, e.x) * (ratio * limit_slope / limit * sense / deformation);
         let gradient = Triple::new(by_u.x, by_u.y, at.x * by_u.y - at.y * by_u.x);
         Some(Utmost { ratio, gradient, piece, at, angle, deformation })
     }

@@ -21,6 +21,7 @@ use super::outcome::{Motion, NotSolved, Place, Reason, Rupture, State, Ultimate}
 use super::path::{PathSettings, follow};
 use crate::mechanics::law::rupture_limit;
 use crate::mechanics::{PlaneGroup, Quadrature, Triple};
+use nalgebra::Vector2;
 
 /// Which states are looked for.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -233,8 +234,7 @@ impl<'a> UltimateSolver<'a> {
         });
         let translation = at.q.xy().norm();
         let centre = (at.q.z.abs() > PURE_TRANSLATION * translation).then(|| {
-            let centre = group.section.centroid
-                + crate::model::Vector::new(-at.q.y, at.q.x, 0.0) * (group.gyration / at.q.z);
+            let centre = group.unscaled(Vector2::new(-at.q.y, at.q.x) / at.q.z);
             [centre.x, centre.y]
         });
         State {
