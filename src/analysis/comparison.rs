@@ -107,6 +107,7 @@ impl CaseReport {
         let resultant = self.load.force.norm() * self.ultimate()?.governing().load_factor;
         let per_length = joint.rules.longitudinal.value * weld.filler.strength * weld.size.throat();
         let length: f64 = joint.group.welds().iter().map(|weld| weld.length() * f64::from(weld.sides)).sum();
+        #[allow(clippy::float_cmp)] // equal as given; nothing is computed
         let leg = weld.size.leg().filter(|_| weld.size.legs().is_some_and(|[a, b]| a == b));
         (resultant > 0.0).then(|| Coefficients {
             mean_strength: resultant / (per_length * length),

@@ -50,6 +50,7 @@ pub fn root(mut f: impl FnMut(f64) -> f64, a: f64, b: f64) -> Option<f64> {
 /// A local maximum of `f` between `a` and `b`: place and value.
 ///
 /// The place is found to about 1e-8 of the bracket, the value to rounding where `f` is smooth.
+#[allow(clippy::float_cmp)] // the very same place, not one nearby
 pub fn maximise(mut f: impl FnMut(f64) -> f64, a: f64, b: f64) -> (f64, f64) {
     let golden = 0.5 * (3.0 - 5.0_f64.sqrt());
     let (mut low, mut high) = (a.min(b), a.max(b));
