@@ -186,11 +186,10 @@ fn paths(code: &str, start: &str) -> Vec<(usize, String)> {
                     '}' => depth -= 1,
                     _ => {}
                 }
-                let ends = (letter == ',' && depth == 1) || depth == 0;
-                if ends && !name.trim().is_empty() {
+                if depth == 0 || (depth == 1 && letter == ',') {
                     found.push((at, name.trim().to_owned()));
                     name.clear();
-                } else if !ends && !(letter == '{' && depth == 1) {
+                } else if depth > 1 || letter != '{' {
                     name.push(letter);
                 }
                 if depth == 0 {
@@ -203,6 +202,7 @@ fn paths(code: &str, start: &str) -> Vec<(usize, String)> {
             found.push((at, behind[..end.unwrap_or(behind.len())].to_owned()));
         }
     }
+    found.retain(|(_, name)| !name.is_empty());
     found
 }
 
