@@ -10,4 +10,6 @@ mod diagnostics;
 mod fixture;
 mod oracle;
 mod reading;
+#[cfg(feature = "cli")]
+mod readme;
 mod states;
