@@ -10,7 +10,7 @@
 //! * where the deformation meets a kink of the law.
 //!
 //! In the cell next to a foot the distance is substituted by `z^2` (half powers become smooth), or by
-//! `z^10` where the centre lies on the weld itself (a start like s^0.3 becomes z^3).
+//! `z^5` where the centre lies on the weld itself (a start like s^0.3 becomes z^1.5 dz^5, smooth enough).
 //!
 //! | symbol | code | unit | meaning |
 //! |---|---|---|---|
@@ -124,8 +124,8 @@ impl Panels {
         let on_the_weld = scale < ON_THE_WELD * range;
         let (reach, power) = match (on_the_weld, group.kink_levels.is_empty()) {
             (false, _) => (quadrature.first * scale, 2),
-            (true, true) => (range / 3.0, 10),
-            (true, false) => (1e-6 * range, 10),
+            (true, true) => (1e-2 * range, 5),
+            (true, false) => (1e-6 * range, 5),
         };
         self.feet.push(Foot { at, scale, reach, power, span });
     }

@@ -16,6 +16,7 @@
 //! | lambda | `load` | N | size of the load carried along L |
 //! | - | `unbalance` | - | `|W / |W| - L|`, zero in equilibrium |
 
+use crate::mechanics::law::rupture_limit;
 use crate::mechanics::{PlaneGroup, Quadrature, Resultant, Triple, Utmost};
 use nalgebra::{Matrix4, Vector4};
 
@@ -58,7 +59,10 @@ impl Iterate {
         let utmost = group.utmost(q)?;
         let q = q / utmost.ratio;
         let utmost = Utmost { ratio: 1.0, deformation: utmost.deformation / utmost.ratio, ..utmost };
-        let resultant = group.resultant(&q, quadrature);
+        let mut resultant = group.resultant(&q, quadrature);
+        if rupture_limit(&group.law, 0.0).is_none() {
+            resultant.tangent = group.resultant(&nudged(&q), quadrature).tangent;
+        }
         let size = resultant.wrench.norm();
         let unbalance = (resultant.wrench / size - direction).norm();
         let load = resultant.wrench.dot(direction);
@@ -72,6 +76,18 @@ impl Iterate {
         solution.iter().all(|value| value.is_finite()).then_some((solution.xyz(), solution.w))
     }
 }
+
+/// A motion a little aside of `q`.
+///
+/// A law that jumps to full strength at the slightest displacement gives the wrench a tangent that no quadrature
+/// sees while the centre lies exactly on the weld: the force beside it turns round where the centre moves. A
+/// little aside the turn is resolved, and the tangent there serves Newton's method as well.
+fn nudged(q: &Triple) -> Triple {
+    q + Triple::new(0.5, 0.7, 0.5) * (NUDGE * q.norm())
+}
+
+/// Size of the nudge over that of the motion: large against the smallest panels (1e-9), small against the motion.
+const NUDGE: f64 = 1e-6;
 
 /// The matrix `[K, -L; (dg/dq)^T, 0]`, rows of force scaled by the wrench, columns by the motion.
 fn bordered(state: &Iterate, direction: &Triple) -> Matrix4<f64> {
