@@ -52,7 +52,8 @@ fn case(name: &'static str, runs: Vec<Run>, at: [f64; 2]) -> Case {
 
 fn cases() -> Vec<Case> {
     let straight = |from: [f64; 2], to: [f64; 2]| {
-        Run::straight(Vector::new(from[0], from[1], 0.0), Vector::new(to[0], to[1], 0.0)).expect("a run has length")
+        Run::straight(Vector::new(from[0], from[1], 0.0), Vector::new(to[0], to[1], 0.0))
+            .expect("a run has length")
     };
     vec![
         case("single line", vec![straight([0.0, 0.0], [0.0, 200.0])], [120.0, 90.0]),
@@ -65,7 +66,11 @@ fn cases() -> Vec<Case> {
             ],
             [250.0, 90.0],
         ),
-        case("ring", vec![Run::arc(Vector::zeros(), 60.0, 0.0, TAU).expect("a ring has length")], [150.0, 10.0]),
+        case(
+            "ring",
+            vec![Run::arc(Vector::zeros(), 60.0, 0.0, TAU).expect("a ring has length")],
+            [150.0, 10.0],
+        ),
     ]
 }
 
@@ -94,7 +99,8 @@ fn solve(criterion: &mut Criterion) {
 fn check(criterion: &mut Criterion) {
     criterion.bench_function("check --demo", |bencher| {
         bencher.iter(|| {
-            let joint = read_joint("demo", black_box(catalog::DEMO), &Options::default()).expect("the demo is valid");
+            let joint =
+                read_joint("demo", black_box(catalog::DEMO), &Options::default()).expect("the demo is valid");
             check_text(&[analyse(&joint)], &Layout::default())
         });
     });

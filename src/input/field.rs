@@ -100,6 +100,8 @@ pub(super) enum Content {
     Bare(f64),
     /// A text.
     Expression(Expression),
+    /// Something whose fault is reported already: it keeps its place among others.
+    Faulty,
 }
 
 /// A number of the file.
@@ -156,14 +158,19 @@ pub(super) fn field(node: &Node, name: &str, faults: &mut Faults<'_>) -> Option<
     Some(Field { name: name.to_owned(), origin, content })
 }
 
-/// A list of numbers or expressions.
+/// A list of numbers or expressions; a faulty one keeps its place, so that the others are still checked.
 pub(super) fn fields(node: &Node, name: &str, faults: &mut Faults<'_>) -> Option<Located<Vec<Field>>> {
     let Value::List(items) = &node.value else {
         wrong_kind(node, name, "a list of numbers", faults);
         return None;
     };
-    let read: Vec<Field> = items.iter().filter_map(|item| field(item, name, faults)).collect();
-    (read.len() == items.len()).then(|| Located { span: node.span.clone(), value: read })
+    let faulty = |item: &Node| Field {
+        name: name.to_owned(),
+        origin: Origin::from(&item.span),
+        content: Content::Faulty,
+    };
+    let read = items.iter().map(|item| field(item, name, faults).unwrap_or_else(|| faulty(item))).collect();
+    Some(Located { span: node.span.clone(), value: read })
 }
 
 /// The choice a text names, or a fault that lists the choices.

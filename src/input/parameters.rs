@@ -123,7 +123,7 @@ pub(super) fn resolve(entries: &[ParameterEntry], faults: &mut Faults<'_>) -> Pa
                 found.dedup();
                 found
             }
-            Some(Content::Bare(_)) | None => Vec::new(),
+            Some(Content::Bare(_) | Content::Faulty) | None => Vec::new(),
         })
         .collect();
     let mut users: Vec<Vec<usize>> = vec![Vec::new(); entries.len()];
@@ -144,7 +144,7 @@ pub(super) fn resolve(entries: &[ParameterEntry], faults: &mut Faults<'_>) -> Pa
         let value = match entries[at].field.as_ref().map(|field| &field.content) {
             Some(Content::Bare(number)) => Some(Quantity::pure(*number)),
             Some(Content::Expression(expression)) => parameters.value(expression, faults),
-            None => None,
+            Some(Content::Faulty) | None => None,
         };
         parameters.0.insert(entries[at].name.clone(), value);
         for user in &users[at] {

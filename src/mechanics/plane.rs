@@ -155,6 +155,12 @@ impl PlaneGroup {
         }
     }
 
+    /// The same group as a continuous weld, without elements.
+    #[must_use]
+    pub fn continuous(&self) -> Self {
+        Self { elements: Vec::new(), ..self.clone() }
+    }
+
     /// A load as `(F_x, F_y, M_z / rho)` about the centroid.
     #[must_use]
     pub fn triple(&self, load: &Wrench) -> Triple {

@@ -74,6 +74,8 @@ pub struct UltimateSolver<'a> {
 const SAME_MOTION: f64 = 1e-6;
 /// Unbalance a coarse search must reach for an ending to be kept.
 const SEARCH_UNBALANCE: f64 = 1e-9;
+/// Elements up to which the atlas is sampled on the elements themselves: about as many as quadrature has nodes.
+const FEW_ELEMENTS: usize = 150;
 /// Nodes a panel of the solution, tried in turn until the tolerance is met.
 const POINTS: [u16; 4] = [6, 10, 14, 20];
 /// Rotation (scaled by the gyration radius) over translation below which the motion is a pure translation.
@@ -89,9 +91,17 @@ impl<'a> UltimateSolver<'a> {
     }
 
     /// The group's atlas, sampled at first use.
+    ///
+    /// Many elements carry what the continuous weld carries, so its atlas gives the starts for them as well.
     #[must_use]
     pub fn atlas(&self) -> &Atlas {
-        self.atlas.get_or_init(|| Atlas::new(self.group, &self.settings.atlas))
+        self.atlas.get_or_init(|| {
+            if self.group.elements.len() > FEW_ELEMENTS {
+                Atlas::new(&self.group.continuous(), &self.settings.atlas)
+            } else {
+                Atlas::new(self.group, &self.settings.atlas)
+            }
+        })
     }
 
     /// Solves for the load (F_x, F_y, M / rho) about the centroid, which must not be zero.

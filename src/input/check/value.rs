@@ -48,6 +48,7 @@ impl<'p> Values<'p> {
                 self.wrong_dimension(field, dimension, quantity, faults);
                 None
             }
+            Content::Faulty => None,
         }
     }
 

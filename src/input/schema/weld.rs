@@ -148,11 +148,12 @@ fn read_path(node: &Node, faults: &mut Faults<'_>) -> Option<Located<Vec<Point>>
         wrong_kind(node, "`path`", "a list of points", faults);
         return None;
     };
-    let points: Vec<Point> =
-        items.iter().filter_map(|item| read_point(item, "a point of `path`", faults)).collect();
-    if points.len() != items.len() {
-        return None;
-    }
+    // A faulty point keeps its place without components, so that the others are still checked.
+    let faulty = |item: &Node| Located { span: item.span.clone(), value: Vec::new() };
+    let points: Vec<Point> = items
+        .iter()
+        .map(|item| read_point(item, "a point of `path`", faults).unwrap_or_else(|| faulty(item)))
+        .collect();
     if points.len() < 2 {
         let message = format!("`path` must have at least two points, found {}", points.len());
         faults.at(&node.span, message);
