@@ -48,7 +48,7 @@ pub(super) enum Command {
     /// Verify joints: ultimate and elastic strength, utilisation, verdict
     #[command(after_help = CHECK_EXAMPLES)]
     Check(CheckArguments),
-    /// List rule sets and load-deformation laws, or show one with its clauses
+    /// List rule sets and load-deformation laws, or show one with its clauses and sources
     Rules(RulesArguments),
     /// Write a commented starter file
     New(NewArguments),

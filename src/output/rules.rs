@@ -43,7 +43,7 @@ pub fn rules_text(sets: &[RuleSet], laws: &[Law], layout: &Layout) -> String {
     text.push('\n');
     let legend = "Values are `read` when all of them were checked against the published text, `recalled` when \
                   some were not: confirm those before you rest a design on them. `weldpole rules ID` shows one \
-                  rule set or law with every number and its clause.";
+                  rule set with every number and its clause, or one law with its source.";
     text + &hanging("", legend, layout.columns())
 }
 
