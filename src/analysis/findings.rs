@@ -123,8 +123,10 @@ fn about_rules(joint: &Joint) -> Vec<Finding> {
         say(
             Grade::Note,
             &joint.law.id,
-            "the law's coefficients were not read in the publication itself; they reproduce printed tables"
-                .into(),
+            format!(
+                "the law's coefficients were recalled, not read in the publication: {}",
+                joint.law.source
+            ),
         );
     }
     if let Discretisation::Elements(count) = joint.discretisation {

@@ -56,6 +56,7 @@ pub(super) enum Command {
 
 /// Arguments of `check`.
 #[derive(Debug, Args)]
+#[command(override_usage = "weldpole check [OPTIONS] <FILES>...\n       weldpole check [OPTIONS] --demo")]
 pub(super) struct CheckArguments {
     /// Joint files; `-` is standard input
     #[arg(value_name = "FILES", required_unless_present = "demo")]

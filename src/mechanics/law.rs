@@ -51,6 +51,10 @@ impl Direction {
     /// The direction of the displacement with the given components along and across the weld axis, not both
     /// zero.
     #[must_use]
+    #[expect(
+        clippy::imprecise_flops,
+        reason = "displacements are far from overflow, and hypot costs as much as a power"
+    )]
     pub fn of(along: f64, across: f64) -> Self {
         let length = (along * along + across * across).sqrt();
         Self {

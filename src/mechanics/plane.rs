@@ -10,7 +10,7 @@
 //! | rho | `gyration` | mm | sqrt(J / A) |
 //! | S | `strength` | N per rho | longitudinal strength of a piece per unit of scaled length |
 //! | w | `size` | mm | deformation size of the weld |
-//! | u | [`Piece::displacement`] | mm | `u = (v_x - omega y, v_y + omega x)` |
+//! | u | [`displacement`] | mm | `u = (v_x - omega y, v_y + omega x)` |
 //!
 //! Source: kinematics of a small rigid motion. Runs out of the plane z = 0 are refused by the input layer.
 

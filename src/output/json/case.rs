@@ -4,7 +4,7 @@ use super::value::{Number, Pair, Triple, Utilisation};
 use crate::analysis::{Analyses, CaseReport, Check};
 use crate::model::{Basis, Joint};
 use crate::output::names::{basis_name, confirmation_name, status_name, verdict_name};
-use crate::solvers::{ElasticPeak, NotSolved, Rupture, State};
+use crate::solvers::{ElasticPeak, NotSolved, Rupture, Ultimate};
 use serde::Serialize;
 
 #[derive(Serialize)]
@@ -63,6 +63,8 @@ struct CriticalJson<'a> {
 struct StateJson {
     load_factor: Number,
     centre: Option<Pair>,
+    /// Whether the path from zero load leads to this state; `null` where the path is not known.
+    reached: Option<bool>,
 }
 
 #[derive(Serialize)]
@@ -169,8 +171,7 @@ impl<'a> UltimateJson<'a> {
             critical: state
                 .and_then(|state| state.critical.as_ref())
                 .map_or_else(CriticalJson::default, |rupture| CriticalJson::new(rupture, joint)),
-            states: answer
-                .map_or_else(Vec::new, |answer| answer.states.iter().map(StateJson::from).collect()),
+            states: answer.map_or_else(Vec::new, StateJson::all),
             peak_load_factor: answer.and_then(|answer| answer.peak_load_factor).map(Number),
             residual: state.map(|state| Number(state.residual)),
             error_estimate: state.map(|state| Number(state.error_estimate)),
@@ -190,9 +191,16 @@ impl<'a> CriticalJson<'a> {
     }
 }
 
-impl From<&State> for StateJson {
-    fn from(state: &State) -> Self {
-        Self { load_factor: Number(state.load_factor), centre: state.centre.map(Pair::from) }
+impl StateJson {
+    fn all(ultimate: &Ultimate) -> Vec<Self> {
+        let states = ultimate.states.iter().enumerate();
+        states
+            .map(|(index, state)| Self {
+                load_factor: Number(state.load_factor),
+                centre: state.centre.map(Pair::from),
+                reached: ultimate.reached.map(|reached| reached == index),
+            })
+            .collect()
     }
 }
 

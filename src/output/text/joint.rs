@@ -2,7 +2,7 @@
 
 use super::{case, cases, words};
 use crate::analysis::{Analyses, Finding, Grade, Report, Section};
-use crate::model::{DesignFactor, Joint};
+use crate::model::{Confirmation, DesignFactor, Joint};
 use crate::output::layout::{Emphasis, Layout};
 use crate::output::number::{length, people, point, power_of_length};
 use crate::output::table::{hanging, labelled, wrap};
@@ -61,11 +61,19 @@ fn input(report: &Report, layout: &Layout) -> String {
         ("File", joint.file.clone()),
         ("Rules", format!("{} ({}); {}", rules.title, rules.id, words::confirmation(rules.status()))),
         ("Design factor", design_factor(&rules.design)),
-        ("Law", format!("{} ({}); {}", joint.law.title, joint.law.id, words::discretisation(joint))),
+        ("Law", law(joint)),
         ("Loads", loads.to_owned()),
     ];
     rows.extend(section(joint, &report.section));
     labelled(0, &rows, layout.columns())
+}
+
+fn law(joint: &Joint) -> String {
+    let recalled = match joint.law.status {
+        Confirmation::Read => "",
+        Confirmation::Recalled => "; coefficients recalled",
+    };
+    format!("{} ({}); {}{recalled}", joint.law.title, joint.law.id, words::discretisation(joint))
 }
 
 fn design_factor(factor: &DesignFactor) -> String {
