@@ -7,6 +7,12 @@
 mod cli;
 mod diagnostics;
 mod fixture;
+mod laws;
 mod oracle;
+mod published;
+mod random;
 mod reading;
+mod reference;
+mod shapes;
 mod states;
+mod symmetry;
