@@ -5,9 +5,13 @@
 
 #[cfg(feature = "cli")]
 mod cli;
+mod derivatives;
 mod diagnostics;
+mod elements;
+mod equilibrium;
 mod fixture;
 mod laws;
+mod limits;
 mod oracle;
 mod published;
 mod random;

@@ -138,3 +138,47 @@ pub fn answer(
         gyration: plane.gyration,
     }
 }
+
+/// The sketch as a joint file, lengths over `length` mm, forces over `force` N.
+pub fn text(sketch: &Sketch, units: &str, length: f64, force: f64) -> String {
+    use std::fmt::Write;
+    let mut text = format!("units = \"{units}\"\nrules = \"nominal\"\n");
+    let (stress, moment) = (force / (length * length), if units == "metric" { 1e6 } else { force * length });
+    for (index, piece) in sketch.pieces.iter().enumerate() {
+        let point = |vector: Vector| format!("[{:?}, {:?}]", vector.x / length, vector.y / length);
+        writeln!(
+            text,
+            "[[weld]]\nname = \"w{index}\"\nleg = {:?}\nsides = {}\nfiller = {{ strength = {:?} }}",
+            piece.leg / length,
+            piece.sides,
+            piece.strength / if units == "metric" { 1.0 } else { stress }
+        )
+        .unwrap();
+        match piece.sweep {
+            None => {
+                let run = piece.run();
+                writeln!(text, "path = [{}, {}]", point(run.point(0.0)), point(run.point(1.0))).unwrap();
+            }
+            Some(sweep) => writeln!(
+                text,
+                "arc = {{ centre = {}, radius = {:?}, start = {:?}, sweep = {sweep:?} }}",
+                point(at(piece.from[0], piece.from[1])),
+                piece.length / length,
+                piece.turn
+            )
+            .unwrap(),
+        }
+    }
+    let load = sketch.load();
+    writeln!(
+        text,
+        "[[load]]\ncase = \"a\"\nat = [{:?}, {:?}]\nforce = [{:?}, {:?}]\nmoment = {:?}",
+        load.reference.x / length,
+        load.reference.y / length,
+        load.force.x / force,
+        load.force.y / force,
+        load.moment.z / moment
+    )
+    .unwrap();
+    text
+}

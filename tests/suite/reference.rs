@@ -265,20 +265,20 @@ fn peaks_on_the_path_from_zero_load() {
 
 /// Ratios of error to estimate.
 #[derive(Default)]
-struct Honesty {
+pub struct Honesty {
     ratios: Vec<f64>,
     error: f64,
     estimate: f64,
 }
 
 impl Honesty {
-    fn note(&mut self, error: f64, estimate: f64) {
+    pub fn note(&mut self, error: f64, estimate: f64) {
         self.ratios.push(error / estimate);
         self.error = self.error.max(error);
         self.estimate = self.estimate.max(estimate);
     }
 
-    fn judge(mut self, against: &str) {
+    pub fn judge(mut self, against: &str) {
         self.ratios.sort_by(f64::total_cmp);
         let count = self.ratios.len();
         let within = self.ratios.iter().filter(|ratio| **ratio <= HONEST).count();

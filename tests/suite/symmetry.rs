@@ -5,7 +5,7 @@
 
 use crate::fixture::at;
 use crate::laws::{LAWS, shipped};
-use crate::random::{Answer, Sketch, answer, check, sketch};
+use crate::random::{Answer, Sketch, answer, check, sketch, text};
 use proptest::prelude::*;
 use proptest::test_runner::TestCaseError;
 use weldpole::input::{Options, read_joint};
@@ -241,6 +241,8 @@ fn the_opposite_load_has_the_same_strength_and_centre() {
 #[test]
 fn every_law_and_the_elements_know_the_same_symmetries() {
     check(CASES, &(sketch(), 0..LAWS.len(), any::<bool>()), |(sketch, law, elements)| {
+        // Some loads on rigid-plastic elements have no state (see `elements`).
+        let elements = elements && LAWS[law] != "rigid-plastic";
         let discretisation = if elements { Discretisation::Elements(30) } else { Discretisation::Continuous };
         let solve = |welds: &WeldGroup, load: &Wrench| {
             answer(welds, load, shipped(LAWS[law]), discretisation, sketch.search())
@@ -257,50 +259,6 @@ fn every_law_and_the_elements_know_the_same_symmetries() {
         let after = Wrench::new(mirror(load.reference), mirror(load.force), -load.moment).unwrap();
         same(&solve(&sketch.welds(), &load), &solve(&welds, &after.scaled(-2.0)), 0.5, mirror)
     });
-}
-
-/// The sketch as a joint file, lengths over `length` mm, forces over `force` N.
-fn text(sketch: &Sketch, units: &str, length: f64, force: f64) -> String {
-    use std::fmt::Write;
-    let mut text = format!("units = \"{units}\"\nrules = \"nominal\"\n");
-    let (stress, moment) = (force / (length * length), if units == "metric" { 1e6 } else { force * length });
-    for (index, piece) in sketch.pieces.iter().enumerate() {
-        let point = |vector: Vector| format!("[{:?}, {:?}]", vector.x / length, vector.y / length);
-        writeln!(
-            text,
-            "[[weld]]\nname = \"w{index}\"\nleg = {:?}\nsides = {}\nfiller = {{ strength = {:?} }}",
-            piece.leg / length,
-            piece.sides,
-            piece.strength / if units == "metric" { 1.0 } else { stress }
-        )
-        .unwrap();
-        match piece.sweep {
-            None => {
-                let run = piece.run();
-                writeln!(text, "path = [{}, {}]", point(run.point(0.0)), point(run.point(1.0))).unwrap();
-            }
-            Some(sweep) => writeln!(
-                text,
-                "arc = {{ centre = {}, radius = {:?}, start = {:?}, sweep = {sweep:?} }}",
-                point(at(piece.from[0], piece.from[1])),
-                piece.length / length,
-                piece.turn
-            )
-            .unwrap(),
-        }
-    }
-    let load = sketch.load();
-    writeln!(
-        text,
-        "[[load]]\ncase = \"a\"\nat = [{:?}, {:?}]\nforce = [{:?}, {:?}]\nmoment = {:?}",
-        load.reference.x / length,
-        load.reference.y / length,
-        load.force.x / force,
-        load.force.y / force,
-        load.moment.z / moment
-    )
-    .unwrap();
-    text
 }
 
 #[test]
