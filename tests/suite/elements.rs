@@ -81,6 +81,8 @@ fn columns_sum_to_the_load_in_every_example() {
 #[test]
 fn columns_sum_to_the_load_in_random_groups() {
     check(CASES, &(sketch(), 0..LAWS.len(), any::<bool>()), |(sketch, law, elements)| {
+        // Rigid-plastic elements jump as the centre crosses a mid-point: some loads lie in the jump and have no state.
+        let elements = elements && LAWS[law] != "rigid-plastic";
         let options =
             Options { elements: elements.then_some(23), law: Some(LAWS[law].into()), ..Options::default() };
         let report = report("random.toml", &text(&sketch, "metric", 1.0, 1000.0), &options);

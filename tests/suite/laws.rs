@@ -22,8 +22,7 @@ pub fn strength(id: &str, theta: f64, deformation: f64) -> f64 {
         "lesik-kennedy-polynomial" if p <= 0.0325 => directional * 8.23384 * p,
         "lesik-kennedy-polynomial" => {
             directional
-                * (-13.29 * p + 457.32 * p.powf(1.0 / 2.0) - 3385.9 * p.powf(1.0 / 3.0)
-                    + 9054.29 * p.powf(0.25)
+                * (-13.29 * p + 457.32 * p.sqrt() - 3385.9 * p.cbrt() + 9054.29 * p.powf(0.25)
                     - 9952.13 * p.powf(0.2)
                     + 3840.71 * p.powf(1.0 / 6.0))
         }
@@ -64,7 +63,10 @@ fn every_law_is_its_published_formula() {
             let law = shipped(id);
             let own = rupture_limit(law, theta.to_radians()).map_or(f64::INFINITY, |(value, _)| value);
             let most = limit(id, theta);
-            assert!(own == most || (own / most - 1.0).abs() < SAME_FORMULA, "{id}, {theta}: {own}, {most}");
+            assert!(
+                (own / most - 1.0).abs() < SAME_FORMULA || own.min(most).is_infinite(),
+                "{id}, {theta}: {own}, {most}"
+            );
             for share in [1e-4, 1e-3, 0.01, 0.1, 0.3, 0.7, 1.0] {
                 let deformation = share * most.min(1.0);
                 let own = response(law, theta.to_radians(), theta.to_radians().sin(), deformation).strength;

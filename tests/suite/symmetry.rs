@@ -265,7 +265,7 @@ fn every_law_and_the_elements_know_the_same_symmetries() {
 fn metric_and_us_files_give_the_same_answers() {
     check(CASES, &sketch(), |sketch| {
         // Exact: 1 in = 25.4 mm, 1 kip = 4448.2216152605 N.
-        let (inch, kip) = (25.4, 4448.221_615_260_5);
+        let (inch, kip) = (25.4, 4_448.221_615_260_5);
         let read = |text: &str| {
             let joint = read_joint("random.toml", text, &Options::default());
             joint.unwrap_or_else(|faults| panic!("{faults:?} in\n{text}"))
