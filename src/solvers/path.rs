@@ -105,17 +105,46 @@ impl Follower<'_> {
                 step *= 0.5;
                 continue;
             }
-            if self.ratio(&next) >= 1.0 {
-                return self.end(&point, &tangent, step, peak);
+            let ruptured = if self.ratio(&next) >= 1.0 {
+                Some(step)
+            } else {
+                self.hump((&point, &tangent), (&next, &next_tangent), step)
+            };
+            if let Some(length) = ruptured {
+                return self.end(&point, &tangent, length, peak);
             }
             if tangent.w > 0.0 && next_tangent.w < 0.0 {
                 peak = peak.max(self.summit(&point, &tangent, step)?);
             }
             peak = peak.max(next.w);
             (point, tangent) = (next, next_tangent);
-            step = (1.5 * step).min(settings.longest_step);
+            let near_rupture = self.ratio(&point) > NEAR_RUPTURE;
+            let share = if near_rupture { STEP_NEAR_RUPTURE } else { 1.0 };
+            step = (1.5 * step).min(share * settings.longest_step);
         }
         None
+    }
+
+    /// The length within a step to the greatest deformation ratio, where that rises, reaches 1 and falls again:
+    /// inside a fold the group ruptures for a short stretch that both ends of a step can leave out.
+    fn hump(&self, from: (&Point, &Point), to: (&Point, &Point), step: f64) -> Option<f64> {
+        if self.rise(from.0, from.1) <= 0.0 || self.rise(to.0, to.1) >= 0.0 {
+            return None;
+        }
+        let rise = |length: f64| {
+            self.corrected(&(from.0 + from.1 * length), from.1)
+                .and_then(|at| Some(self.rise(&at, &self.tangent(&at, Some(from.1))?)))
+                .unwrap_or(f64::NAN)
+        };
+        let length = root(rise, 0.0, step)?;
+        let at = self.corrected(&(from.0 + from.1 * length), from.1)?;
+        (self.ratio(&at) >= 1.0).then_some(length)
+    }
+
+    /// Change of the deformation ratio along the path.
+    fn rise(&self, at: &Point, tangent: &Point) -> f64 {
+        let utmost = self.group.utmost(&(at.xyz() * self.motion_scale));
+        utmost.map_or(0.0, |utmost| utmost.gradient.dot(&tangent.xyz()))
     }
 
     /// Closes in on first rupture within the last step.
@@ -226,5 +255,10 @@ impl Follower<'_> {
     }
 }
 
+/// Deformation ratio from which shorter steps are taken: in a fold it may rise, fall and rise again, the place of
+/// its maximum changing in between, before a step of full length ends.
+const NEAR_RUPTURE: f64 = 0.85;
+/// Those steps over the longest; a half is enough for all reference joints.
+const STEP_NEAR_RUPTURE: f64 = 0.25;
 /// Least cosine between successive tangents: sharper bends are taken in shorter steps.
 const MOST_BEND: f64 = 0.9;

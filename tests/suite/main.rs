@@ -6,10 +6,20 @@
 mod architecture;
 #[cfg(feature = "cli")]
 mod cli;
+mod derivatives;
 mod diagnostics;
+mod elements;
+mod equilibrium;
 mod fixture;
+mod laws;
+mod limits;
 mod oracle;
+mod published;
+mod random;
 mod reading;
 #[cfg(feature = "cli")]
 mod readme;
+mod reference;
+mod shapes;
 mod states;
+mod symmetry;
