@@ -49,8 +49,8 @@
 //!
 //! let case = &report.cases[report.governing.expect("every case has an answer")];
 //! assert_eq!(case.name, "1.2 dead + 1.6 crane");
-//! let ultimate = case.ultimate_strength(&joint.rules).expect("the load is not zero");
-//! let elastic = case.elastic_strength(&joint.rules).expect("the load is not zero");
+//! let ultimate = case.ultimate_strength(&joint).expect("the load is not zero");
+//! let elastic = case.elastic_strength(&joint).expect("the load is not zero");
 //! assert!((ultimate.load_factor - 1.5144).abs() < 1e-4);
 //! assert!((elastic.load_factor - 0.8796).abs() < 1e-4);
 //!

@@ -6,11 +6,11 @@
 //! | lambda_d | `design_load_factor` | - | the same for the design strength |
 //! | U | `utilisation` | - | 1 / lambda_d |
 //!
-//! The firewall stands here and nowhere else: where the rule set does not accept the ultimate analysis, its
-//! design strength and utilisation do not exist.
+//! The firewall: where the rule set does not accept the ultimate analysis, its design strength and utilisation
+//! do not exist for any writer. Which analysis is accepted is told by [`Joint::accepts`] alone.
 
 use super::{Analyses, CaseReport, Check, Grade, Report, Status};
-use crate::model::{Basis, Joint, RuleSet};
+use crate::model::{Basis, Joint, Run, WeldGroup};
 use crate::solvers::{Elastic, NotSolved, Ultimate};
 
 /// What one method says about the strength of the group under the load of one case.
@@ -35,10 +35,33 @@ impl Strength {
 pub struct Coefficients {
     /// Ultimate resultant over the longitudinal strength of the whole length of weld.
     pub mean_strength: f64,
-    /// Handbook coefficient `C = R_n / (D l)`, kip/in: l the longest run, D the leg in sixteenths of an inch, as
+    /// Handbook coefficient `C = R_n / (D l)`, kip/in: l the longest straight line, all sides counted in R_n, D the leg in sixteenths of an inch, as
     /// for E70 filler; `None` for welds without equal legs.
     pub handbook: Option<f64>,
 }
+
+/// The longest straight line of a group, mm: runs that continue each other count as one. The longest run where
+/// none is straight.
+fn longest_line(group: &WeldGroup) -> f64 {
+    let mut longest: f64 = 0.0;
+    for weld in group.welds() {
+        let mut line = 0.0;
+        let mut before: Option<&Run> = None;
+        for run in &weld.runs {
+            let continues = before.is_some_and(|before| {
+                let both_straight = matches!((before, run), (Run::Straight { .. }, Run::Straight { .. }));
+                both_straight && before.tangent(1.0).dot(&run.tangent(0.0)) > 1.0 - STRAIGHT_ON
+            });
+            line = if continues { line + run.length() } else { run.length() };
+            longest = longest.max(line);
+            before = Some(run);
+        }
+    }
+    longest
+}
+
+/// Shortfall of the cosine between two directions that still count as one.
+const STRAIGHT_ON: f64 = 1e-12;
 
 /// Longitudinal strength of a 1/16 in fillet of E70: `0.60 x 70 ksi x (1/16 in) / sqrt 2`, kip/in.
 const KIP_PER_INCH_OF_SIXTEENTH: f64 = 0.60 * 70.0 / 16.0 * std::f64::consts::FRAC_1_SQRT_2;
@@ -73,18 +96,21 @@ impl CaseReport {
 
     /// Strength by the ultimate method.
     #[must_use]
-    pub fn ultimate_strength(&self, rules: &RuleSet) -> Option<Strength> {
+    pub fn ultimate_strength(&self, joint: &Joint) -> Option<Strength> {
         let load_factor = self.ultimate()?.governing().load_factor;
-        let accepted = rules.accepts(Basis::Ultimate);
-        let design_load_factor = accepted.then(|| load_factor * rules.design.multiplier());
+        let accepted = joint.accepts(Basis::Ultimate);
+        let design_load_factor = accepted.then(|| load_factor * joint.rules.design.multiplier());
         Some(Strength { load_factor, design_load_factor })
     }
 
     /// Strength by the elastic vector method.
     #[must_use]
-    pub fn elastic_strength(&self, rules: &RuleSet) -> Option<Strength> {
+    pub fn elastic_strength(&self, joint: &Joint) -> Option<Strength> {
         let load_factor = self.elastic()?.load_factor;
-        Some(Strength { load_factor, design_load_factor: Some(load_factor * rules.design.multiplier()) })
+        Some(Strength {
+            load_factor,
+            design_load_factor: Some(load_factor * joint.rules.design.multiplier()),
+        })
     }
 
     /// Nominal load factor of the ultimate method over that of the elastic method.
@@ -112,7 +138,7 @@ impl CaseReport {
         (resultant > 0.0).then(|| Coefficients {
             mean_strength: resultant / (per_length * length),
             handbook: leg
-                .map(|_| KIP_PER_INCH_OF_SIXTEENTH * resultant / (per_length * joint.group.longest_run())),
+                .map(|_| KIP_PER_INCH_OF_SIXTEENTH * resultant / (per_length * longest_line(&joint.group))),
         })
     }
 

@@ -48,12 +48,12 @@ fn case_report(
     };
     let ultimate = solver.solve(&triple);
     let demand = Demand::of(&load);
-    let mut checks = vec![elastic_check(&elastic, demand, rules)];
-    checks.extend(concentric_checks(&joint.group, &load, rules));
+    let mut checks = vec![elastic_check(&elastic, demand, joint)];
+    checks.extend(concentric_checks(joint, &load));
     if let Ok(ultimate) = &ultimate {
-        checks.push(ultimate_check(ultimate, &joint.law, demand, rules));
+        checks.push(ultimate_check(ultimate, demand, joint));
     }
-    let unanswered = ultimate.is_err() && rules.accepts(Basis::Ultimate);
+    let unanswered = ultimate.is_err() && joint.accepts(Basis::Ultimate);
     let verification = if unanswered { None } else { verification(&checks) };
     governing_first(&mut checks, verification.as_ref());
     let satisfied = |verification: &Verification| {

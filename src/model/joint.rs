@@ -1,6 +1,6 @@
 //! A joint: everything one joint file says, as model values.
 
-use super::{Filler, Law, LoadCase, RuleSet, WeldGroup};
+use super::{Basis, Filler, Law, LoadCase, RuleSet, WeldGroup};
 use crate::units::UnitSystem;
 
 /// How the weld is integrated.
@@ -73,4 +73,20 @@ pub struct Joint {
     pub unused_cases: Vec<String>,
     /// Title block.
     pub document: Document,
+}
+
+impl Joint {
+    /// Whether a verification of this joint may rest on an analysis.
+    ///
+    /// The ultimate analysis counts with a law that the rule set accepts for it; the elastic one where the rule
+    /// set accepts it and no ultimate analysis counts, so that it never outbids the more exact result.
+    #[must_use]
+    pub fn accepts(&self, basis: Basis) -> bool {
+        let ultimate = self.rules.accepts(Basis::Ultimate) && self.rules.accepts_law(&self.law.id);
+        match basis {
+            Basis::Ultimate => ultimate,
+            Basis::Elastic => self.rules.accepts(Basis::Elastic) && !ultimate,
+            Basis::Concentric => self.rules.accepts(Basis::Concentric),
+        }
+    }
 }

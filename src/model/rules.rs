@@ -95,6 +95,8 @@ pub struct RuleSet {
     pub design: DesignFactor,
     /// The analyses the code accepts as a verification.
     pub accepts: Vec<Basis>,
+    /// The laws with which the ultimate analysis is accepted; any law when empty.
+    pub ultimate_laws: Vec<String>,
     /// Clause that accepts the ultimate analysis.
     pub ultimate_clause: String,
     /// Clause or document behind the elastic comparison.
@@ -110,6 +112,12 @@ impl RuleSet {
     #[must_use]
     pub fn accepts(&self, basis: Basis) -> bool {
         self.accepts.contains(&basis)
+    }
+
+    /// Whether the code accepts the ultimate analysis with this law.
+    #[must_use]
+    pub fn accepts_law(&self, law: &str) -> bool {
+        self.ultimate_laws.is_empty() || self.ultimate_laws.iter().any(|accepted| accepted == law)
     }
 
     /// Every sourced number of the rule set, with its name.

@@ -29,6 +29,7 @@ pub(super) fn rules() -> RuleSet {
         longitudinal: number(0.6, Confirmation::Read),
         design: DesignFactor::Resistance(number(0.75, Confirmation::Recalled)),
         accepts: vec![Basis::Ultimate, Basis::Elastic],
+        ultimate_laws: Vec::new(),
         ultimate_clause: "X2.4, note".into(),
         elastic_clause: "X2.4(a)".into(),
         concentric: Vec::new(),

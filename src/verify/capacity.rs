@@ -1,26 +1,32 @@
 //! The two analyses as verifications, and which verification decides.
 //!
-//! Of all verifications that the rule set accepts, each is sufficient by itself, so the largest accepted
-//! strength decides. An analysis the rule set does not accept is information: it takes part in no verdict.
+//! Of the verifications that are accepted for a joint each is sufficient by itself, so the largest accepted
+//! strength decides. An analysis that is not accepted is information: it takes part in no verdict. A joint whose
+//! accepted ultimate analysis has no answer is not solved, whatever the other rows say.
 
 use super::check::{Check, Demand, Topic, Verification};
-use crate::model::{Basis, Confirmation, Law, RuleSet};
+use crate::model::{Basis, Confirmation, Joint};
 use crate::solvers::{Elastic, Ultimate};
 
 /// The instantaneous-centre method against the design strength.
 ///
 /// The row counts as recalled when the law's coefficients are, whatever the rule set's numbers.
 #[must_use]
-pub fn ultimate_check(ultimate: &Ultimate, law: &Law, demand: Demand, rules: &RuleSet) -> Check {
+pub fn ultimate_check(ultimate: &Ultimate, demand: Demand, joint: &Joint) -> Check {
+    let state = ultimate.governing();
     let topic = Topic {
         id: "instantaneous-centre".into(),
         basis: Basis::Ultimate,
-        clause: rules.ultimate_clause.clone(),
-        subject: "weld group, first rupture".into(),
+        clause: joint.rules.ultimate_clause.clone(),
+        subject: if state.critical.is_some() {
+            "weld group, first rupture"
+        } else {
+            "weld group, full strength"
+        }
+        .into(),
     };
-    let state = ultimate.governing();
-    let mut check = Check::new(topic, state.load_factor, state.error_estimate, demand, rules);
-    if law.status == Confirmation::Recalled {
+    let mut check = Check::new(topic, state.load_factor, state.error_estimate, demand, joint);
+    if joint.law.status == Confirmation::Recalled {
         check.values = Confirmation::Recalled;
     }
     check
@@ -28,14 +34,14 @@ pub fn ultimate_check(ultimate: &Ultimate, law: &Law, demand: Demand, rules: &Ru
 
 /// The elastic vector method against the design strength.
 #[must_use]
-pub fn elastic_check(elastic: &Elastic, demand: Demand, rules: &RuleSet) -> Check {
+pub fn elastic_check(elastic: &Elastic, demand: Demand, joint: &Joint) -> Check {
     let topic = Topic {
         id: "elastic-vector".into(),
         basis: Basis::Elastic,
-        clause: rules.elastic_clause.clone(),
+        clause: joint.rules.elastic_clause.clone(),
         subject: "weld group, worst point".into(),
     };
-    Check::new(topic, elastic.load_factor, 4.0 * f64::EPSILON, demand, rules)
+    Check::new(topic, elastic.load_factor, 4.0 * f64::EPSILON, demand, joint)
 }
 
 /// The accepted check of largest design strength, if any is accepted.

@@ -8,7 +8,7 @@
 //!
 //! A check is satisfied when `U (1 + error) <= 1`, with the relative error estimate of lambda.
 
-use crate::model::{Basis, Confirmation, DesignFactor, RuleSet, Wrench};
+use crate::model::{Basis, Confirmation, DesignFactor, Joint, RuleSet, Wrench};
 
 /// One verification.
 #[derive(Debug, Clone, PartialEq)]
@@ -78,18 +78,19 @@ pub(super) struct Topic {
 }
 
 impl Check {
-    /// A check of a nominal load factor against the design strength of a rule set.
+    /// A check of a nominal load factor against the design strength of the joint's rule set.
     pub(super) fn new(
         topic: Topic,
         load_factor: f64,
         error_estimate: f64,
         demand: Demand,
-        rules: &RuleSet,
+        joint: &Joint,
     ) -> Self {
+        let rules = &joint.rules;
         let design_load_factor = load_factor * rules.design.multiplier();
         let utilisation = 1.0 / design_load_factor;
         Self {
-            accepted: rules.accepts(topic.basis),
+            accepted: joint.accepts(topic.basis),
             id: topic.id,
             basis: topic.basis,
             clause: topic.clause,

@@ -14,16 +14,18 @@
 //! Not applicable to a load with a moment about the centroid, to arcs, or to welds of several sizes or fillers.
 
 use super::check::{Check, Demand, Topic};
-use crate::model::{Basis, ConcentricRule, RuleSet, Run, Vector, WeldGroup, Wrench};
+use crate::model::{Basis, ConcentricRule, Joint, Run, Vector, Wrench};
 
-/// Largest moment about the centroid over force times length of weld for a load to count as concentric.
-const CONCENTRIC: f64 = 1e-6;
+/// Largest eccentricity over the length of weld for a load to count as concentric: far below any tolerance of
+/// fabrication, and enough for a centroid typed to a tenth of a millimetre on a metre of weld.
+const CONCENTRIC: f64 = 1e-4;
 /// Largest deviation of a run from an exact direction, rad.
 const ALIGNED: f64 = 1e-6;
 
 /// The concentric rules of a rule set that apply to a load given about the weld centroid.
 #[must_use]
-pub fn concentric_checks(group: &WeldGroup, load: &Wrench, rules: &RuleSet) -> Vec<Check> {
+pub fn concentric_checks(joint: &Joint, load: &Wrench) -> Vec<Check> {
+    let (group, rules) = (&joint.group, &joint.rules);
     let Some(weld) = group.uniform() else { return Vec::new() };
     let runs: Vec<&Run> = group.welds().iter().flat_map(|weld| &weld.runs).collect();
     let length: f64 = runs.iter().map(|run| run.length()).sum();
@@ -40,7 +42,7 @@ pub fn concentric_checks(group: &WeldGroup, load: &Wrench, rules: &RuleSet) -> V
         .iter()
         .filter_map(|rule| {
             let (topic, resistance) = resistance(rule, &runs, &direction)?;
-            Some(Check::new(topic, resistance * strength / force, 4.0 * f64::EPSILON, demand, rules))
+            Some(Check::new(topic, resistance * strength / force, 4.0 * f64::EPSILON, demand, joint))
         })
         .collect()
 }

@@ -157,7 +157,7 @@ mod tests {
         assert!((asd.design.multiplier() - 0.50).abs() < 1e-15);
         for rules in [lrfd, asd] {
             assert!(rules.accepts(Basis::Ultimate) && rules.accepts(Basis::Concentric));
-            assert!(!rules.accepts(Basis::Elastic));
+            assert!(rules.accepts_law("lesik-kennedy") && !rules.accepts_law("rigid-plastic"));
             assert_eq!(rules.concentric.len(), 2);
             assert_eq!(rules.status(), Confirmation::Read);
         }

@@ -40,6 +40,8 @@ struct File {
     edition: String,
     law: String,
     accepts: Vec<Accepted>,
+    #[serde(default)]
+    ultimate_laws: Vec<String>,
     ultimate_clause: String,
     elastic_clause: String,
     remarks: Vec<String>,
@@ -106,6 +108,7 @@ pub(super) fn read(text: &str) -> Result<RuleSet, String> {
         longitudinal: sourced(file.longitudinal)?,
         design,
         accepts,
+        ultimate_laws: file.ultimate_laws,
         ultimate_clause: file.ultimate_clause,
         elastic_clause: file.elastic_clause,
         concentric,

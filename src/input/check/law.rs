@@ -56,7 +56,7 @@ fn own(entry: &OwnLaw, values: &Values<'_>, faults: &mut Faults<'_>) -> Option<L
             id: "own".to_owned(),
             title: name,
             source: "curves of the joint file".to_owned(),
-            status: Confirmation::Read,
+            status: Confirmation::Recalled,
             form: LawForm::Table(table),
         }),
         Err(error) => {

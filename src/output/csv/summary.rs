@@ -41,9 +41,9 @@ pub fn summary_csv(reports: &[Report]) -> String {
     to_text(rows)
 }
 
-fn fields(report: &Report, case: &CaseReport, joint: String, governing: bool) -> [String; 17] {
-    let rules = &report.joint.rules;
-    let (ultimate, elastic) = (case.ultimate_strength(rules), case.elastic_strength(rules));
+fn fields(report: &Report, case: &CaseReport, label: String, governing: bool) -> [String; 17] {
+    let joint = &report.joint;
+    let (ultimate, elastic) = (case.ultimate_strength(joint), case.elastic_strength(joint));
     let state = case.ultimate().map(Ultimate::governing);
     let decided = case.verification.as_ref();
     let utilisation = match case.analyses {
@@ -51,7 +51,7 @@ fn fields(report: &Report, case: &CaseReport, joint: String, governing: bool) ->
         Analyses::Loaded { .. } => decided.map(|verification| verification.utilisation),
     };
     [
-        joint,
+        label,
         case.name.clone(),
         status_name(case.status).to_owned(),
         decided.map(|verification| basis_name(verification.basis).to_owned()).unwrap_or_default(),

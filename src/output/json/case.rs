@@ -149,8 +149,8 @@ impl<'a> CaseJson<'a> {
 
 impl<'a> UltimateJson<'a> {
     fn new(case: &'a CaseReport, joint: &'a Joint) -> Self {
-        let strength = case.ultimate_strength(&joint.rules);
-        let accepted = joint.rules.accepts(Basis::Ultimate);
+        let strength = case.ultimate_strength(joint);
+        let accepted = joint.accepts(Basis::Ultimate);
         let answer = case.ultimate();
         let state = answer.map(crate::solvers::Ultimate::governing);
         let motion = state.map(|state| state.motion);
@@ -206,7 +206,7 @@ impl StateJson {
 
 impl<'a> ElasticJson<'a> {
     fn new(case: &'a CaseReport, joint: &'a Joint) -> Self {
-        let strength = case.elastic_strength(&joint.rules);
+        let strength = case.elastic_strength(joint);
         Self {
             load_factor: strength.map(|strength| Number(strength.load_factor)),
             design_load_factor: strength.and_then(|strength| strength.design_load_factor).map(Number),

@@ -54,9 +54,8 @@ fn resultant(case: &CaseReport, factor: Option<f64>, units: UnitSystem) -> Strin
 /// The two methods side by side.
 fn methods(case: &CaseReport, joint: &Joint, layout: &Layout) -> String {
     let units = joint.units;
-    let rules = &joint.rules;
-    let (ultimate, elastic) = (case.ultimate_strength(rules), case.elastic_strength(rules));
-    let accepted = rules.accepts(Basis::Ultimate);
+    let (ultimate, elastic) = (case.ultimate_strength(joint), case.elastic_strength(joint));
+    let accepted = joint.accepts(Basis::Ultimate);
     let design = |strength: Option<Strength>| strength.and_then(|strength| strength.design_load_factor);
     let nominal = |strength: Option<Strength>| strength.map(|strength| strength.load_factor);
     let factor = |value: Option<f64>| value.map_or_else(|| MISSING.to_owned(), people);
@@ -72,7 +71,7 @@ fn methods(case: &CaseReport, joint: &Joint, layout: &Layout) -> String {
         table.row(vec![label.into(), clip(&left, METHOD_WIDTH).into(), clip(&right, METHOD_WIDTH).into()]);
     };
     row("method", words::basis(Basis::Ultimate).into(), words::basis(Basis::Elastic).into());
-    let word = |basis: Basis| if rules.accepts(basis) { "accepted" } else { "information" }.to_owned();
+    let word = |basis: Basis| if joint.accepts(basis) { "accepted" } else { "information" }.to_owned();
     row("under these rules", word(Basis::Ultimate), word(Basis::Elastic));
     row(
         "nominal strength",
@@ -139,7 +138,7 @@ fn remarks(case: &CaseReport, joint: &Joint, layout: &Layout) -> String {
         ));
     }
     sentences.extend(case.ultimate_over_elastic().map(ratio));
-    if !joint.rules.accepts(Basis::Ultimate) && case.ultimate().is_some() {
+    if !joint.accepts(Basis::Ultimate) && case.ultimate().is_some() {
         sentences.push(format!(
             "{} does not accept the ultimate analysis: it is information and decides nothing.",
             joint.rules.edition
@@ -205,7 +204,7 @@ fn states(answer: &Ultimate, units: UnitSystem) -> Vec<String> {
 fn coefficients(coefficients: Coefficients) -> String {
     let handbook = coefficients.handbook.map_or_else(String::new, |handbook| {
         format!(
-            "; handbook C = {} kip/in (E70, per sixteenth of an inch of leg, on the longest run)",
+            "; handbook C = {} kip/in (E70, per sixteenth of an inch of leg, on the longest straight line)",
             people(handbook)
         )
     });

@@ -18,15 +18,15 @@ pub(super) fn text(report: &Report, layout: &Layout) -> String {
         ("ult./el.", Side::Right),
         ("", Side::Left),
     ]);
-    let rules = &report.joint.rules;
+    let joint = &report.joint;
     let number = |value: Option<f64>| value.map_or_else(|| MISSING.to_owned(), people);
     for (index, case) in report.cases.iter().enumerate() {
         table.row(vec![
             case.name.as_str().into(),
             Cell::emphasised(words::status(case.status), words::status_emphasis(case.status)),
             words::case_utilisation(case).into(),
-            number(case.ultimate_strength(rules).map(|strength| strength.load_factor)).into(),
-            number(case.elastic_strength(rules).map(|strength| strength.load_factor)).into(),
+            number(case.ultimate_strength(joint).map(|strength| strength.load_factor)).into(),
+            number(case.elastic_strength(joint).map(|strength| strength.load_factor)).into(),
             number(case.ultimate_over_elastic()).into(),
             if report.governing == Some(index) { "governs" } else { "" }.into(),
         ]);
