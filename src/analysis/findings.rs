@@ -60,6 +60,13 @@ fn about_case(case: &CaseReport) -> Vec<Finding> {
             ),
         );
     }
+    if ultimate.incomplete {
+        say(
+            Grade::Caution,
+            "the search for equilibrium states saw signs of a state it could not find: a smaller strength is possible"
+                .into(),
+        );
+    }
     match ultimate.peak_load_factor {
         None => say(
             Grade::Caution,

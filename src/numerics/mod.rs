@@ -1,4 +1,4 @@
-//! Pure mathematics, with no weld in sight: quadrature, roots and maxima of one variable, the sphere.
+//! Pure mathematics, with no weld in sight: quadrature, roots and maxima of one variable.
 
 mod gauss;
 mod roots;

@@ -147,6 +147,7 @@ pub(super) fn case(name: &str, factor: f64) -> CaseReport {
         states: vec![state(factor, Some([-12.5, 50.0])), state(1.1 * factor, None)],
         peak_load_factor: Some(1.05 * factor),
         reached: Some(1),
+        incomplete: false,
     };
     let elastic = Elastic {
         load_factor: 0.8 * factor,

@@ -6,6 +6,7 @@ mod equilibrium;
 mod fallback;
 mod outcome;
 mod path;
+mod search;
 mod ultimate;
 
 pub use atlas::{Atlas, AtlasSettings};

@@ -64,6 +64,8 @@ pub struct Ultimate {
     pub peak_load_factor: Option<f64>,
     /// Index in `states` of the state the path from zero load leads to.
     pub reached: Option<usize>,
+    /// Whether the search saw signs of a state that it could not find; false where only one was looked for.
+    pub incomplete: bool,
 }
 
 impl Ultimate {

@@ -9,19 +9,21 @@
 //!
 //! * the change from quadrature of n to quadrature of n + 4 nodes a panel (an overestimate for the latter);
 //! * the last Newton step in lambda;
-//! * rounding: machine epsilon times the condition of lambda against the wrench.
+//! * rounding: machine epsilon times the condition of lambda against the wrench;
+//! * with mid-point elements, the distance to the load of the continuous weld in the state nearby.
 //!
 //! Source: the method of Butler, Pal and Kulak (1972) with the laws in `mechanics::law`; AISC Manual Part 8.
 //! Valid for a plane group of positive length, for which every load has a state.
 
 use super::atlas::{Atlas, AtlasSettings};
-use super::equilibrium::{Ending, Iterate, NewtonSettings, newton, orientation};
-use super::fallback::direct_search;
+use super::equilibrium::{Iterate, NewtonSettings, newton};
 use super::outcome::{Motion, NotSolved, Place, Reason, Rupture, State, Ultimate};
 use super::path::{PathSettings, follow};
+use super::search::search;
 use crate::mechanics::law::rupture_limit;
 use crate::mechanics::{PlaneGroup, Quadrature, Triple};
 use nalgebra::Vector2;
+use std::cell::OnceCell;
 
 /// Which states are looked for.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -65,29 +67,26 @@ impl Default for UltimateSettings {
 /// A group with what is prepared once and used for all its loads.
 #[derive(Debug)]
 pub struct UltimateSolver<'a> {
-    group: &'a PlaneGroup,
-    settings: UltimateSettings,
-    atlas: std::cell::OnceCell<Atlas>,
+    pub(super) group: &'a PlaneGroup,
+    pub(super) settings: UltimateSettings,
+    atlas: OnceCell<Atlas>,
+    continuous: OnceCell<PlaneGroup>,
 }
 
 /// Endings whose directions of motion differ by less than this are one state.
-const SAME_MOTION: f64 = 1e-6;
-/// Unbalance a coarse search must reach for an ending to be kept.
-const SEARCH_UNBALANCE: f64 = 1e-9;
+pub(super) const SAME_MOTION: f64 = 1e-6;
 /// Elements up to which the atlas is sampled on the elements themselves: about as many as quadrature has nodes.
 const FEW_ELEMENTS: usize = 150;
 /// Nodes a panel of the solution, tried in turn until the tolerance is met.
-const POINTS: [u16; 4] = [6, 10, 14, 20];
+pub(super) const POINTS: [u16; 4] = [6, 10, 14, 20];
 /// Rotation (scaled by the gyration radius) over translation below which the motion is a pure translation.
 const PURE_TRANSLATION: f64 = 1e-12;
-/// First simplices of the fallback search, rad.
-const SIMPLICES: [f64; 3] = [0.1, 0.01, 0.5];
 
 impl<'a> UltimateSolver<'a> {
     /// Prepares the analysis of a group.
     #[must_use]
     pub fn new(group: &'a PlaneGroup, settings: UltimateSettings) -> Self {
-        Self { group, settings, atlas: std::cell::OnceCell::new() }
+        Self { group, settings, atlas: OnceCell::new(), continuous: OnceCell::new() }
     }
 
     /// The group's atlas, sampled at first use.
@@ -114,93 +113,54 @@ impl<'a> UltimateSolver<'a> {
         if !(size.is_normal() && direction.iter().all(|value| value.is_finite())) {
             return Err(failure(Reason::NotFinite, f64::INFINITY, None, Vec::new()));
         }
-        let mut trace = Vec::new();
-        let endings = self.search(&direction, &mut trace)?;
-        let mut solved: Vec<(Iterate, State)> = Vec::new();
+        let harvest = search(self, &direction)?;
+        let mut incomplete = harvest.incomplete;
+        let mut solved: Vec<Solved> = Vec::new();
         let mut refused = None;
-        for ending in &endings {
-            match self.refined(ending, &direction, size) {
-                Ok(pair) => {
-                    let new = solved.iter().all(|(known, _)| distance(&known.q, &pair.0.q) > SAME_MOTION);
-                    if new {
-                        solved.push(pair);
-                    }
-                }
+        for ending in &harvest.endings {
+            match self.refined(&ending.state.q, ending.steps, &direction, size) {
+                Ok(found) => add_new(&mut solved, found),
                 Err(reason) => refused = Some((reason, ending)),
             }
         }
-        solved.sort_by(|(_, a), (_, b)| a.load_factor.total_cmp(&b.load_factor));
-        let Some((smallest, _)) = solved.first() else {
+        incomplete |= refused.is_some();
+        sort_and_thin(&mut solved);
+        let Some(smallest) = solved.first() else {
             let (reason, residual, best) = refused
-                .map_or((Reason::Stalled, f64::INFINITY, None), |(r, e)| {
-                    (r, e.state.unbalance, Some(self.motion(&e.state.q)))
+                .map_or((Reason::Stalled, f64::INFINITY, None), |(reason, ending)| {
+                    (reason, ending.state.unbalance, Some(self.motion(&ending.state.q)))
                 });
-            return Err(failure(reason, residual, best, trace));
+            return Err(NotSolved { reason, residual, best, trace: harvest.trace });
         };
         let (mut peak_load_factor, mut reached) = (None, None);
         if rupture_limit(&self.group.law, 0.0).is_none() {
-            peak_load_factor = Some(solved[0].1.load_factor);
+            peak_load_factor = Some(smallest.state.load_factor);
             reached = Some(0);
         } else if self.settings.path {
-            let path =
-                follow(self.group, &direction, (&smallest.q, smallest.load), &self.settings.path_settings);
-            if let Some(path) = path {
-                reached = solved.iter().position(|(known, _)| distance(&known.q, &path.last) < 1e-4);
-                let floor = reached.map_or(0.0, |index| solved[index].1.load_factor);
+            let typical = (&smallest.at.q, smallest.at.load);
+            if let Some(path) = follow(self.group, &direction, typical, &self.settings.path_settings) {
+                if position(&solved, &path.last).is_none() {
+                    incomplete = true;
+                    if let Ok(found) = self.refined(&path.last, 0, &direction, size) {
+                        add_new(&mut solved, found);
+                        sort_and_thin(&mut solved);
+                    }
+                }
+                reached = position(&solved, &path.last);
+                let floor = reached.map_or(0.0, |index| solved[index].state.load_factor);
                 peak_load_factor = Some((path.peak / size).max(floor));
             }
         }
-        let states = solved.into_iter().map(|(_, state)| state).collect();
-        Ok(Ultimate { states, peak_load_factor, reached })
+        incomplete &= self.settings.search == Search::All;
+        let states = solved.into_iter().map(|found| found.state).collect();
+        Ok(Ultimate { states, peak_load_factor, reached, incomplete })
     }
 
-    /// Distinct endings of Newton's method from all starts, on coarse quadrature.
-    fn search(&self, direction: &Triple, trace: &mut Vec<f64>) -> Result<Vec<Ending>, NotSolved> {
-        let settings = NewtonSettings { unbalance: SEARCH_UNBALANCE, ..self.settings.newton };
-        let mut hunt = Hunt {
-            group: self.group,
-            direction,
-            settings,
-            quadrature: Quadrature::coarse(),
-            endings: Vec::new(),
-            best: None,
-            trace,
-        };
-        // The elastic motion: v = F / A and omega rho = (M / rho) / A, so the load itself.
-        hunt.attempt(direction);
-        if self.settings.search == Search::All || hunt.endings.is_empty() {
-            hunt.attempt_all(&self.atlas().starts(direction));
-            if hunt.signs() != 1 {
-                hunt.quadrature = Quadrature::fine(POINTS[0]);
-                hunt.attempt_all(&self.atlas().wide_starts(direction));
-            }
-        }
-        if hunt.endings.is_empty() {
-            let nearest = self.atlas().nearest(direction);
-            for size in SIMPLICES {
-                if let Some(motion) = direct_search(self.group, &nearest, direction, &hunt.quadrature, size) {
-                    hunt.attempt(&motion);
-                }
-                if !hunt.endings.is_empty() {
-                    break;
-                }
-            }
-        }
-        let Hunt { endings, best, .. } = hunt;
-        if endings.is_empty() {
-            let residual = best.map_or(f64::INFINITY, |ending| ending.state.unbalance);
-            let reason = if best.is_none() { Reason::NoResistance } else { Reason::Stalled };
-            let motion = best.map(|ending| self.motion(&ending.state.q));
-            return Err(failure(reason, residual, motion, std::mem::take(trace)));
-        }
-        Ok(endings)
-    }
-
-    /// Solves again on finer quadrature until the error estimate meets the tolerance.
-    fn refined(&self, ending: &Ending, direction: &Triple, size: f64) -> Result<(Iterate, State), Reason> {
+    /// Solves again from the motion `start` on finer quadrature until the error estimate meets the tolerance.
+    fn refined(&self, start: &Triple, steps: usize, direction: &Triple, size: f64) -> Result<Solved, Reason> {
+        let in_elements = !self.group.elements.is_empty();
         let mut before: Option<f64> = None;
-        let mut start = ending.state.q;
-        let mut steps = ending.steps;
+        let (mut start, mut steps) = (*start, steps);
         let mut reason = Reason::Stalled;
         for points in POINTS {
             let quadrature = Quadrature::fine(points);
@@ -215,18 +175,28 @@ impl<'a> UltimateSolver<'a> {
             start = ending.state.q;
             let load = ending.state.load;
             if let Some(before) = before {
-                let quadrature_error =
-                    if self.group.elements.is_empty() { (load - before).abs() / load } else { 0.0 };
+                let quadrature_error = if in_elements { 0.0 } else { (load - before).abs() / load };
                 let error = quadrature_error + ending.state.load_error(direction);
                 if error <= self.settings.tolerance {
-                    let state = self.state(&ending.state, direction, size, error, steps);
-                    return Ok((ending.state, state));
+                    let element_error =
+                        if in_elements { self.element_error(&ending.state, direction) } else { 0.0 };
+                    let state = self.state(&ending.state, direction, size, error + element_error, steps);
+                    return Ok(Solved { at: ending.state, state });
                 }
                 reason = Reason::Tolerance;
             }
             before = Some(load);
         }
         Err(reason)
+    }
+
+    /// How far the load of a state in elements is from that of the continuous weld nearby, relative.
+    fn element_error(&self, at: &Iterate, direction: &Triple) -> f64 {
+        let continuous = self.continuous.get_or_init(|| self.group.continuous());
+        let quadrature = Quadrature::fine(POINTS[1]);
+        newton(continuous, &at.q, direction, &quadrature, &self.settings.newton)
+            .filter(|ending| ending.converged && ending.state.load > 0.0)
+            .map_or(0.0, |ending| (ending.state.load - at.load).abs() / at.load)
     }
 
     fn state(&self, at: &Iterate, direction: &Triple, size: f64, error: f64, iterations: usize) -> State {
@@ -258,54 +228,47 @@ impl<'a> UltimateSolver<'a> {
         }
     }
 
-    fn motion(&self, q: &Triple) -> Motion {
+    pub(super) fn motion(&self, q: &Triple) -> Motion {
         Motion { translation: [q.x, q.y], rotation: q.z / self.group.gyration }
     }
 }
 
-/// A search for distinct endings of Newton's method.
-struct Hunt<'a> {
-    group: &'a PlaneGroup,
-    direction: &'a Triple,
-    settings: NewtonSettings,
-    quadrature: Quadrature,
-    endings: Vec<Ending>,
-    /// The ending of smallest unbalance, converged or not.
-    best: Option<Ending>,
-    trace: &'a mut Vec<f64>,
+/// A state with the iterate it was made from.
+#[derive(Debug, Clone)]
+struct Solved {
+    at: Iterate,
+    state: State,
 }
 
-impl Hunt<'_> {
-    fn attempt(&mut self, start: &Triple) {
-        let Some(ending) = newton(self.group, start, self.direction, &self.quadrature, &self.settings) else {
-            return;
-        };
-        self.trace.push(ending.state.unbalance);
-        if self.best.is_none_or(|known| ending.state.unbalance < known.state.unbalance) {
-            self.best = Some(ending);
-        }
-        let q = &ending.state.q;
-        if ending.converged && self.endings.iter().all(|known| distance(&known.state.q, q) > SAME_MOTION) {
-            self.endings.push(ending);
-        }
-    }
+/// Motions whose directions differ by less than this are one state, when one of them ends a path.
+const SAME_END: f64 = 1e-4;
+/// States beyond this number are listed once for each load factor: a group that looks the same when turned (a
+/// ring) can have a whole circle of states.
+const MOST_TWINS: usize = 9;
+/// Relative difference below which two load factors are the same.
+const SAME_FACTOR: f64 = 1e-7;
 
-    fn attempt_all(&mut self, starts: &[Triple]) {
-        for start in starts {
-            self.attempt(start);
-        }
-    }
+fn position(solved: &[Solved], q: &Triple) -> Option<usize> {
+    solved.iter().position(|known| distance(&known.at.q, q) < SAME_END)
+}
 
-    /// Sum of the orientations of the map at the endings; 1 when none is missing.
-    fn signs(&self) -> i32 {
-        let sign = |ending: &Ending| {
-            if orientation(&ending.state.resultant, &ending.state.utmost) >= 0.0 { 1 } else { -1 }
-        };
-        self.endings.iter().map(sign).sum()
+fn add_new(solved: &mut Vec<Solved>, found: Solved) {
+    if solved.iter().all(|known| distance(&known.at.q, &found.at.q) > SAME_MOTION) {
+        solved.push(found);
     }
 }
 
-fn distance(one: &Triple, two: &Triple) -> f64 {
+fn sort_and_thin(solved: &mut Vec<Solved>) {
+    solved.sort_by(|a, b| a.state.load_factor.total_cmp(&b.state.load_factor));
+    if solved.len() > MOST_TWINS {
+        solved.dedup_by(|a, b| {
+            (a.state.load_factor - b.state.load_factor).abs() <= SAME_FACTOR * b.state.load_factor
+        });
+    }
+}
+
+/// Distance between the directions of two motions.
+pub(super) fn distance(one: &Triple, two: &Triple) -> f64 {
     (one.normalize() - two.normalize()).norm()
 }
 
