@@ -1,22 +1,22 @@
 //! Strength of a weld point at a given deformation and direction: the load-deformation laws evaluated.
 //!
-//! The strength per length of weld is `r = S g(theta, d)`, with `S = F_l t` the longitudinal strength per
+//! The strength per length of weld is `r = S s(theta, d)`, with `S = F_l t` the longitudinal strength per
 //! length (F_l the rule set's longitudinal strength per throat area, 0.60 F_EXX in most codes).
 //!
 //! | symbol | code | unit | meaning |
 //! |---|---|---|---|
 //! | theta | `angle` | rad | angle between displacement and weld axis, 0 to pi/2 (degrees inside the powers) |
 //! | d | `deformation` | - | displacement over the deformation size w |
-//! | g | `Response::strength` | - | strength over the longitudinal strength |
+//! | s | `Response::strength` | - | strength over the longitudinal strength |
 //! | Delta_m | `peak` | - | deformation at greatest strength over w |
 //! | Delta_u | [`rupture_limit`] | - | deformation at rupture over w |
 //!
-//! * Lesik-Kennedy: `g = (1 + 0.50 sin^1.5 theta) f(p)`, `p = d / Delta_m`, with
+//! * Lesik-Kennedy: `s = (1 + 0.50 sin^1.5 theta) f(p)`, `p = d / Delta_m`, with
 //!   `f = [p (1.9 - 0.9 p)]^0.3` (simplified) or a polynomial in roots of p.
 //!   Source: Lesik and Kennedy, Can. J. Civ. Eng. 17 (1990); ANSI/AISC 360-10 J2.4.
-//! * Butler-Pal-Kulak: `R = (10 + theta)/(0.92 + 0.0603 theta) (1 - exp(-mu D))^lambda`, `g = R / R(0, inf)`.
+//! * Butler-Pal-Kulak: `R = (10 + theta)/(0.92 + 0.0603 theta) (1 - exp(-mu D))^lambda`, `s = R / R(0, inf)`.
 //!   Source: Butler, Pal and Kulak, J. Struct. Div. ASCE 98 (1972).
-//! * Rigid-plastic: `g = 1 + 0.50 sin^1.5 theta` at any deformation. Own tables: `mechanics::table_law`.
+//! * Rigid-plastic: `s = 1 + 0.50 sin^1.5 theta` at any deformation. Own tables: `mechanics::table_law`.
 //!
 //! Valid for 0 <= d up to rupture. Beyond the end of the simplified curve (p > 2.11) the strength is zero.
 
@@ -26,11 +26,11 @@ use crate::model::{Curve, Directional, Law, LawForm, PowerOfAngle, RootPolynomia
 /// Strength at one point with its derivatives.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Response {
-    /// g, strength over longitudinal strength.
+    /// s, strength over longitudinal strength.
     pub strength: f64,
-    /// dg/dd.
+    /// ds/dd.
     pub by_deformation: f64,
-    /// dg/dtheta, per rad.
+    /// ds/dtheta, per rad.
     pub by_angle: f64,
 }
 
@@ -43,9 +43,13 @@ pub struct Direction {
     pub sine: f64,
     /// cos theta.
     pub cosine: f64,
-    /// d theta / d phi, phi the direction of the displacement in the plane: +1 or -1.
+    /// d theta / d phi, phi the direction of the displacement in the plane: +1 or -1, and where theta is folded
+    /// at 0 and 90 degrees the mean, 0.
     pub sense: f64,
 }
+
+/// Smaller component over displacement below which theta counts as folded.
+const ON_THE_FOLD: f64 = 1e-12;
 
 impl Direction {
     /// The direction of the displacement with the given components along and across the weld axis, not both
@@ -61,7 +65,11 @@ impl Direction {
             angle: across.abs().atan2(along.abs()),
             sine: (across.abs() / length).min(1.0),
             cosine: (along.abs() / length).min(1.0),
-            sense: if (along >= 0.0) == (across >= 0.0) { 1.0 } else { -1.0 },
+            sense: if along.abs().min(across.abs()) <= ON_THE_FOLD * length {
+                0.0
+            } else {
+                (along * across).signum()
+            },
         }
     }
 }
@@ -85,7 +93,7 @@ pub fn response(law: &Law, direction: &Direction, deformation: f64) -> Response 
             let decay = (-mu_value * deformation).exp();
             let base = -(-mu_value * deformation).exp_m1();
             let strength = scale * base.powf(exponent);
-            // d ln g / d(mu D) = lambda e^(-mu D) / (1 - e^(-mu D))
+            // d ln s / d(mu D) = lambda e^(-mu D) / (1 - e^(-mu D))
             let by_mu_d = exponent * decay / base;
             let log_by_theta =
                 by_scale + by_mu_d * mu[1] * mu_value * deformation + exponent * lambda[1] * base.ln();

@@ -1,9 +1,9 @@
 //! The wrench a group resists under a given motion, and its tangent.
 //!
-//! `W(q) = sum over pieces of the integral of B^T f ds`, with the force per length `f = S g(theta, |u|/w) u/|u|`
+//! `W(q) = sum over pieces of the integral of B^T f ds`, with the force per length `f = S s(theta, |u|/w) u/|u|`
 //! and `B = [1 0 -y; 0 1 x]`, so that `u = B q`. The tangent is `K = integral of B^T (df/du) B ds` with
 //!
-//! `df/du = S [ (g_d / w) e e^T + (1/|u|) (g n n^T + sigma g_theta e n^T) ]`,
+//! `df/du = S [ (s_d / w) e e^T + (1/|u|) (s n n^T + sigma s_theta e n^T) ]`,
 //!
 //! e the direction of u, n the normal to it, sigma the sign of d theta / d phi.
 //!
@@ -11,7 +11,7 @@
 //! |---|---|---|---|
 //! | q | `q` | mm | motion (v_x, v_y, omega rho) |
 //! | W | `wrench` | N | (F_x, F_y, M / rho) the motion carries; equals the load in equilibrium |
-//! | K | `tangent` | N/mm | dW/dq; not symmetric, since g depends on the direction |
+//! | K | `tangent` | N/mm | dW/dq; not symmetric, since s depends on the direction |
 //!
 //! At a point that does not move the force is zero; its tangent, infinite there but integrable, is left out.
 

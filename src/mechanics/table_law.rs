@@ -7,7 +7,7 @@
 //! | C_j(xi) | `strength_at` | - | strength of that curve at `xi d_j` |
 //!
 //! Between two curves, with the share `tau` of the way from theta_j to theta_(j+1):
-//! `Delta_u = (1 - tau) d_j + tau d_(j+1)` and `g = (1 - tau) C_j(xi) + tau C_(j+1)(xi)`.
+//! `Delta_u = (1 - tau) d_j + tau d_(j+1)` and `s = (1 - tau) C_j(xi) + tau C_(j+1)(xi)`.
 //! Outside the given angles the nearest curve holds; beyond rupture the last strength is kept.
 //! The interpolation is a choice of this project; the curves are the user's.
 

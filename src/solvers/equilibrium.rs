@@ -44,11 +44,13 @@ pub struct NewtonSettings {
     pub steps: usize,
     /// Most halvings of one step before it is given up.
     pub halvings: usize,
+    /// Deformation ratio g at which equilibrium is sought: 1 at rupture, less on the way to it.
+    pub ratio: f64,
 }
 
 impl Default for NewtonSettings {
     fn default() -> Self {
-        Self { unbalance: 1e-13, steps: 40, halvings: 12 }
+        Self { unbalance: 1e-13, steps: 40, halvings: 12, ratio: 1.0 }
     }
 }
 
@@ -56,9 +58,21 @@ impl Iterate {
     /// The state in the direction of `q`, scaled to rupture; `None` when q moves nothing.
     #[must_use]
     pub fn at(group: &PlaneGroup, q: &Triple, direction: &Triple, quadrature: &Quadrature) -> Option<Self> {
+        Self::at_ratio(group, q, direction, quadrature, 1.0)
+    }
+
+    /// The state in the direction of `q`, scaled to the deformation ratio `ratio`.
+    fn at_ratio(
+        group: &PlaneGroup,
+        q: &Triple,
+        direction: &Triple,
+        quadrature: &Quadrature,
+        ratio: f64,
+    ) -> Option<Self> {
         let utmost = group.utmost(q)?;
-        let q = q / utmost.ratio;
-        let utmost = Utmost { ratio: 1.0, deformation: utmost.deformation / utmost.ratio, ..utmost };
+        let scale = ratio / utmost.ratio;
+        let q = q * scale;
+        let utmost = Utmost { ratio, deformation: utmost.deformation * scale, ..utmost };
         let mut resultant = group.resultant(&q, quadrature);
         if rupture_limit(&group.law, 0.0).is_none() {
             resultant.tangent = group.resultant(&nudged(&q), quadrature).tangent;
@@ -123,7 +137,7 @@ pub fn newton(
     quadrature: &Quadrature,
     settings: &NewtonSettings,
 ) -> Option<Ending> {
-    let mut state = Iterate::at(group, start, direction, quadrature)?;
+    let mut state = Iterate::at_ratio(group, start, direction, quadrature, settings.ratio)?;
     for steps in 0..settings.steps {
         if state.unbalance <= settings.unbalance {
             return Some(Ending { state, steps, converged: true });
@@ -157,7 +171,8 @@ fn improved(
     let (dq, _) = state.step(direction)?;
     let mut fraction = 1.0_f64.min(LONGEST_STEP * state.q.norm() / dq.norm());
     for _ in 0..settings.halvings {
-        if let Some(trial) = Iterate::at(group, &(state.q + dq * fraction), direction, quadrature)
+        let moved = state.q + dq * fraction;
+        if let Some(trial) = Iterate::at_ratio(group, &moved, direction, quadrature, settings.ratio)
             && trial.unbalance < (1.0 - 0.1 * fraction) * state.unbalance
         {
             return Some(trial);

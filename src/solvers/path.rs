@@ -9,7 +9,8 @@
 //!
 //! The path starts at a small deformation ratio (the tangent at zero is infinite) and ends where
 //! `g(q) = max |u| / Delta_u` reaches 1 for the first time. A maximum of lambda is where `t_lambda` changes
-//! sign; it is closed in on by root finding on the step length.
+//! sign; it is closed in on by root finding on the step length. Where that loses the path, it is climbed by
+//! levels of the deformation ratio instead.
 //!
 //! | symbol | code | unit | meaning |
 //! |---|---|---|---|
@@ -21,7 +22,7 @@
 
 use super::equilibrium::{NewtonSettings, newton};
 use crate::mechanics::{PlaneGroup, Quadrature, Triple};
-use crate::numerics::root;
+use crate::numerics::{maximise, root};
 use nalgebra::{Matrix4, Vector4};
 
 /// How the path is followed.
@@ -83,7 +84,7 @@ pub fn follow(
         motion_scale: typical.0.norm(),
         load_scale: typical.1,
     };
-    follower.run(typical.0, settings)
+    follower.run(typical.0, settings).or_else(|| follower.climb(typical.0, settings))
 }
 
 impl Follower<'_> {
@@ -145,6 +146,41 @@ impl Follower<'_> {
     fn rise(&self, at: &Point, tangent: &Point) -> f64 {
         let utmost = self.group.utmost(&(at.xyz() * self.motion_scale));
         utmost.map_or(0.0, |utmost| utmost.gradient.dot(&tangent.xyz()))
+    }
+
+    /// The path by levels of the deformation ratio, each solved from the one below by the damped Newton method.
+    ///
+    /// It cannot turn back, but passes points where the equations have a kink all along the path (a ring that
+    /// turns about its centre: theta is zero everywhere).
+    fn climb(&self, typical: &Triple, settings: &PathSettings) -> Option<Path> {
+        let at = |start: &Triple, ratio: f64| {
+            let newton_settings = NewtonSettings { ratio, ..NewtonSettings::default() };
+            newton(self.group, start, &self.direction, &self.quadrature, &newton_settings)
+                .filter(|ending| ending.converged)
+                .map(|ending| ending.state)
+        };
+        let mut levels = Vec::new();
+        let mut q = *typical;
+        let mut ratio = settings.first_ratio;
+        loop {
+            let state = at(&q, ratio)?;
+            q = state.q;
+            levels.push((ratio, state));
+            if ratio >= 1.0 {
+                break;
+            }
+            ratio = (ratio + 0.5 * settings.longest_step).min(1.0);
+        }
+        let load = |index: usize| levels[index].1.load;
+        let highest = (0..levels.len()).max_by(|a, b| load(*a).total_cmp(&load(*b)))?;
+        let mut peak = load(highest);
+        if highest > 0 && highest + 1 < levels.len() {
+            let (from, to) = (levels[highest - 1].0, levels[highest + 1].0);
+            let height = |ratio: f64| at(&levels[highest].1.q, ratio).map_or(0.0, |state| state.load);
+            peak = peak.max(maximise(height, from, to).1);
+        }
+        let last = levels.last()?.1;
+        Some(Path { peak, last: last.q, last_load: last.load })
     }
 
     /// Closes in on first rupture within the last step.
