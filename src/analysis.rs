@@ -59,7 +59,7 @@ pub struct ElementRow {
     pub ultimate: Option<CellForce>,
     /// Elastic method, at the given load.
     pub elastic: CellForce,
-    /// Elastic stress over strength, as a share of its peak over the group.
+    /// Greatest elastic stress over strength within the element, as a share of the peak over the group.
     pub elastic_ratio: f64,
 }
 

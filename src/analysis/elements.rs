@@ -27,7 +27,8 @@ pub(super) fn rows(
     let row = |cell: &Cell| {
         let weld = &joint.group.welds()[cell.weld];
         let throat = weld.total_throat();
-        let (wrench, middle) = group.cell_of_linear_field(cell, &stress, throat);
+        let wrench = group.cell_of_linear_field(cell, &stress, throat);
+        let (middle, greatest) = group.linear_field_in(cell, &stress);
         let ultimate = state.map(|state| {
             let q = scaled(&state.motion, group);
             let wrench = group.cell_wrench(cell, &q, &quadrature) / state.load_factor;
@@ -45,7 +46,7 @@ pub(super) fn rows(
             deformation_ratio: ultimate.and_then(|(local, _)| local.ratio),
             ultimate: ultimate.map(|(_, force)| force),
             elastic: force(group, &wrench, middle * throat),
-            elastic_ratio: middle / strength * elastic.load_factor,
+            elastic_ratio: greatest / strength * elastic.load_factor,
         }
     };
     cells.iter().map(row).collect()

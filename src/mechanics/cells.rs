@@ -15,6 +15,7 @@ use super::plane::{PlaneGroup, Shape, Triple, along_and_across, as_float, cell_c
 use super::resultant::Resultant;
 use crate::model::{Run, Vector, WeldGroup};
 use crate::numerics::GaussLegendre;
+use nalgebra::Vector2;
 
 /// A part of a run.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -130,9 +131,9 @@ impl PlaneGroup {
     }
 
     /// The integral over a cell of a linear field `v + omega x r` (per throat area), times the throat (mm):
-    /// (F_x, F_y, M / rho), and the size of the field at the middle.
+    /// (F_x, F_y, M / rho).
     #[must_use]
-    pub fn cell_of_linear_field(&self, cell: &Cell, field: &Triple, throat: f64) -> (Triple, f64) {
+    pub fn cell_of_linear_field(&self, cell: &Cell, field: &Triple, throat: f64) -> Triple {
         let piece = &self.pieces[cell.piece];
         let (low, high) = cell.range;
         let (middle, half) = (0.5 * (low + high), 0.5 * (high - low));
@@ -145,6 +146,15 @@ impl PlaneGroup {
             let u = displacement(field, &at);
             sum += Triple::new(u.x, u.y, at.perp(&u)) * (weight * factor);
         }
-        (sum, displacement(field, &piece.frame(middle).0).norm())
+        sum
+    }
+
+    /// The size of a linear field at the middle of a cell, and the greatest within it.
+    #[must_use]
+    pub fn linear_field_in(&self, cell: &Cell, field: &Triple) -> (f64, f64) {
+        let piece = &self.pieces[cell.piece];
+        let size = |at: &Vector2<f64>| displacement(field, at).norm();
+        let greatest = piece.farthest(field, cell.range).iter().map(size).fold(0.0, f64::max);
+        (size(&piece.frame(0.5 * (cell.range.0 + cell.range.1)).0), greatest)
     }
 }

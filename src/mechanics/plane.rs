@@ -90,7 +90,7 @@ pub struct PlaneGroup {
     pub section: Section,
     /// Polar gyration radius, mm.
     pub gyration: f64,
-    /// Strength levels where the law has a kink.
+    /// Levels of deformation where the law has a kink.
     pub(super) kink_levels: Vec<f64>,
     /// Angles where the law has a kink, rad.
     pub(super) kink_angles: Vec<f64>,
@@ -172,7 +172,8 @@ impl PlaneGroup {
     #[must_use]
     pub fn unscaled(&self, at: Vector2<f64>) -> Vector {
         let point = self.section.centroid + Vector::new(at.x, at.y, 0.0) * self.gyration;
-        let rounding = 16.0 * f64::EPSILON * (self.section.centroid.norm() + self.gyration * at.norm());
+        let rounding =
+            16.0 * f64::EPSILON * (self.section.centroid.norm() + self.gyration * (1.0 + at.norm()));
         point.map(|coordinate| if coordinate.abs() <= rounding { 0.0 } else { coordinate })
     }
 }
@@ -212,6 +213,25 @@ impl Piece {
                 (centre + Vector2::new(cosine, sine) * radius, Vector2::new(-sine, cosine))
             }
         }
+    }
+
+    /// The points of a part of the piece where a linear field `v + omega x r` can be greatest: the ends, and on an
+    /// arc the point farthest from the centre of the field.
+    #[must_use]
+    pub fn farthest(&self, field: &Triple, (low, high): (f64, f64)) -> Vec<Vector2<f64>> {
+        let mut places = vec![self.frame(low).0, self.frame(high).0];
+        if let Shape::Arc { centre, .. } = self.shape {
+            // Away from the centre of the field through the arc's centre; the field there is square to that.
+            let at_centre = displacement(field, &centre) * field.z.signum();
+            if at_centre.norm() > 0.0 && field.z != 0.0 {
+                let away = (-at_centre.x).atan2(at_centre.y);
+                let parameter = low + (away - low).rem_euclid(std::f64::consts::TAU);
+                if parameter < high {
+                    places.push(self.frame(parameter).0);
+                }
+            }
+        }
+        places
     }
 
     /// Scaled length per unit of parameter.

@@ -55,6 +55,7 @@ pub fn rule_set_text(set: &RuleSet, layout: &Layout) -> String {
         ("edition", set.edition.clone()),
         ("accepts", accepted(set).join(", ")),
         ("default law", set.law.clone()),
+        ("counts with", set.ultimate_laws.join(", ")),
         ("ultimate", set.ultimate_clause.clone()),
         ("elastic", set.elastic_clause.clone()),
         ("design", design(&set.design)),

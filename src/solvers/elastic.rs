@@ -16,11 +16,11 @@
 //! for example AISC Manual Part 8.
 
 use super::outcome::{Elastic, ElasticPeak, Motion, Place};
-use crate::mechanics::{Piece, PlaneGroup, Shape, Triple, displacement};
+use crate::mechanics::{PlaneGroup, Triple, displacement};
 use crate::model::{Vector, WeldGroup};
-use nalgebra::Vector2;
 
-/// Solves the group elastically for a load (F_x, F_y, M / rho) about its centroid; `None` for a zero load.
+/// Solves the group elastically for a load (F_x, F_y, M / rho) about its centroid; `None` for a load that is zero
+/// or vanishes beside the strength (rounding of loads that cancel).
 #[must_use]
 pub fn elastic(group: &PlaneGroup, welds: &WeldGroup, longitudinal: f64, load: &Triple) -> Option<Elastic> {
     let stress = load / group.section.throat_area;
@@ -28,7 +28,7 @@ pub fn elastic(group: &PlaneGroup, welds: &WeldGroup, longitudinal: f64, load: &
     for piece in &group.pieces {
         let weld = &welds.welds()[piece.weld];
         let strength = longitudinal * weld.filler.strength;
-        for at in places(piece, &stress) {
+        for at in piece.farthest(&stress, piece.range()) {
             let tau = displacement(&stress, &at);
             let ratio = tau.norm() / strength;
             if ratio > worst.map_or(0.0, |(known, _)| known) {
@@ -41,23 +41,8 @@ pub fn elastic(group: &PlaneGroup, welds: &WeldGroup, longitudinal: f64, load: &
     let (ratio, critical) = worst?;
     let load_factor = 1.0 / ratio;
     let stress_motion = Motion { translation: [stress.x, stress.y], rotation: stress.z / group.gyration };
-    load_factor.is_finite().then_some(Elastic { load_factor, critical, stress_motion })
+    (load_factor < NO_LOAD).then_some(Elastic { load_factor, critical, stress_motion })
 }
 
-/// The points of a piece where the stress can be greatest.
-fn places(piece: &Piece, stress: &Triple) -> Vec<Vector2<f64>> {
-    let (low, high) = piece.range();
-    let mut places = vec![piece.frame(low).0, piece.frame(high).0];
-    if let Shape::Arc { centre, radius, .. } = piece.shape {
-        // From the elastic centre through the arc's centre; the stress at the arc's centre is square to it.
-        let at_centre = displacement(stress, &centre);
-        if at_centre.norm() > 0.0 && stress.z != 0.0 {
-            let away = Vector2::new(at_centre.y, -at_centre.x) * (stress.z.signum() / at_centre.norm());
-            let phi = low + (away.y.atan2(away.x) - low).rem_euclid(std::f64::consts::TAU);
-            if phi < high {
-                places.push(centre + away * radius);
-            }
-        }
-    }
-    places
-}
+/// Load factor from which a load counts as none.
+const NO_LOAD: f64 = 1e15;

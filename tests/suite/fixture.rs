@@ -1,29 +1,12 @@
 //! Groups and loads for tests: short constructors and a deterministic stream of random ones.
 
 use std::f64::consts::{FRAC_PI_2, TAU};
+use weldpole::input::catalog;
 use weldpole::mechanics::{PlaneGroup, Triple};
 use weldpole::model::{
-    Confirmation, Curve, Directional, Discretisation, Filler, FilletSize, Law, LawForm, Limit, PowerOfAngle,
-    Run, Vector, Weld, WeldGroup,
+    Discretisation, Document, Filler, FilletSize, Joint, RuleSet, Run, Vector, Weld, WeldGroup,
 };
-
-pub fn lesik_kennedy() -> Law {
-    Law {
-        id: "lesik-kennedy".into(),
-        title: String::new(),
-        source: String::new(),
-        status: Confirmation::Recalled,
-        form: LawForm::LesikKennedy {
-            directional: Directional { amplitude: 0.5 },
-            curve: Curve::Product { a: 1.9, b: 0.9, exponent: 0.3 },
-            peak: PowerOfAngle { coefficient: 0.209, offset: 2.0, exponent: -0.32 },
-            limit: Limit {
-                power: PowerOfAngle { coefficient: 1.087, offset: 6.0, exponent: -0.65 },
-                cap: Some(0.17),
-            },
-        },
-    }
-}
+use weldpole::units::UnitSystem;
 
 pub fn at(x: f64, y: f64) -> Vector {
     Vector::new(x, y, 0.0)
@@ -52,8 +35,27 @@ pub fn group(runs: Vec<Run>, leg: f64) -> WeldGroup {
     WeldGroup::new(welds).unwrap()
 }
 
+/// A joint of these welds under a rule set, with its default law and no case.
+pub fn joint(group: WeldGroup, rules: &RuleSet) -> Joint {
+    Joint {
+        file: "test".into(),
+        title: "test".into(),
+        units: UnitSystem::Metric,
+        rules: rules.clone(),
+        law: catalog::law(&rules.law).unwrap().clone(),
+        discretisation: Discretisation::Continuous,
+        filler: None,
+        plates: Vec::new(),
+        group,
+        cases: Vec::new(),
+        combined: false,
+        unused_cases: Vec::new(),
+        document: Document::default(),
+    }
+}
+
 pub fn plane(group: &WeldGroup) -> PlaneGroup {
-    PlaneGroup::new(group, &lesik_kennedy(), 0.6, Discretisation::Continuous)
+    PlaneGroup::new(group, catalog::law("lesik-kennedy").unwrap(), 0.6, Discretisation::Continuous)
 }
 
 /// A deterministic stream of numbers (xorshift64*, G. Marsaglia, J. Stat. Softw. 8 (2003) 14).

@@ -3,7 +3,7 @@
 //! Expected values labelled *published* stand in that file with document and page; *independent* ones come from
 //! another program (`tests/reference`), or from a formula written out here; *pinned* are our own earlier output.
 
-use crate::fixture::{at, group, straight};
+use crate::fixture::{at, group, joint, straight};
 use crate::shapes::{self, HANDBOOK_KIP_PER_INCH, KIP_PER_INCH};
 use serde::Deserialize;
 use std::f64::consts::FRAC_PI_2;
@@ -167,7 +167,8 @@ fn concentric_rows_by_the_rules_of_j2_4() {
     for row in rows("concentric") {
         let welds = group(shapes::runs(&row.shape, row.k, shapes::LENGTH), shapes::LEG);
         let load = shapes::load(&welds, 0.0, shapes::LENGTH, row.load_angle_deg, 1000.0);
-        let checks = concentric_checks(&welds, &load.about(Section::of(&welds).centroid), aisc());
+        let load = load.about(Section::of(&welds).centroid);
+        let checks = concentric_checks(&joint(welds.clone(), aisc()), &load);
         assert_eq!(checks.len(), 1, "{}", row.id);
         let weld = &welds.welds()[0];
         let per_length = 0.60 * weld.filler.strength * weld.size.throat() * shapes::LENGTH;
