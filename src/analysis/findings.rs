@@ -111,14 +111,14 @@ fn about_welds(joint: &Joint) -> Vec<Finding> {
     let mut findings = Vec::new();
     let mut say = |grade, message: &str| findings.push(finding(grade, "welds", message.into()));
     let first = &welds[0];
-    if welds.iter().any(|weld| weld.size.deformation_size() != first.size.deformation_size()) {
+    if welds.iter().any(|weld| (weld.size.deformation_size() - first.size.deformation_size()).abs() > 0.0) {
         say(
             Grade::Caution,
             "welds of different size in one group: the smallest ruptures first and decides for all; a larger leg \
              elsewhere can lower the strength",
         );
     }
-    if welds.iter().any(|weld| weld.filler.strength != first.filler.strength) {
+    if welds.iter().any(|weld| (weld.filler.strength - first.filler.strength).abs() > 0.0) {
         say(
             Grade::Caution,
             "filler metals of different strength in one group: the same load-deformation curve is taken for all",

@@ -23,3 +23,4 @@ mod reference;
 mod shapes;
 mod states;
 mod symmetry;
+mod verdicts;
