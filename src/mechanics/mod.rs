@@ -4,6 +4,7 @@ mod cells;
 pub mod law;
 mod panels;
 mod plane;
+mod response;
 mod resultant;
 mod rupture;
 mod section;

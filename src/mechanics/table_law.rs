@@ -11,7 +11,7 @@
 //! Outside the given angles the nearest curve holds; beyond rupture the last strength is kept.
 //! The interpolation is a choice of this project; the curves are the user's.
 
-use super::law::Response;
+use super::response::Response;
 use crate::model::{TableCurve, TableLaw};
 
 /// The two curves around an angle (degrees), the share between them, and its derivative per degree.
