@@ -40,7 +40,7 @@ pub fn elastic(group: &PlaneGroup, welds: &WeldGroup, longitudinal: f64, load: &
     }
     let (ratio, critical) = worst?;
     let load_factor = 1.0 / ratio;
-    let stress_motion = Motion { translation: [stress.x, stress.y], rotation: stress.z / group.gyration };
+    let stress_motion = Motion::of(group, &stress);
     (load_factor < NO_LOAD).then_some(Elastic { load_factor, critical, stress_motion })
 }
 

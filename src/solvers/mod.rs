@@ -7,6 +7,7 @@ mod fallback;
 mod outcome;
 mod path;
 mod search;
+mod settings;
 mod ultimate;
 
 pub use atlas::{Atlas, AtlasSettings};
@@ -14,4 +15,5 @@ pub use elastic::elastic;
 pub use equilibrium::{Ending, Iterate, NewtonSettings, newton, orientation};
 pub use outcome::{Elastic, ElasticPeak, Motion, NotSolved, Place, Reason, Rupture, State, Ultimate};
 pub use path::{Path, PathSettings, follow};
-pub use ultimate::{Search, UltimateSettings, UltimateSolver};
+pub use settings::{Search, UltimateSettings};
+pub use ultimate::UltimateSolver;

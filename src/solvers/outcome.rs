@@ -1,5 +1,6 @@
 //! What a solver answers: a solution with its evidence, or the reason why there is none.
 
+use crate::mechanics::{PlaneGroup, Triple};
 use crate::model::Vector;
 use thiserror::Error;
 
@@ -10,6 +11,13 @@ pub struct Motion {
     pub translation: [f64; 2],
     /// Rotation about z, rad.
     pub rotation: f64,
+}
+
+impl Motion {
+    /// The motion of a scaled triple (v_x, v_y, omega rho).
+    pub(super) fn of(group: &PlaneGroup, q: &Triple) -> Self {
+        Self { translation: [q.x, q.y], rotation: q.z / group.gyration }
+    }
 }
 
 /// A point of the weld that decides a result.

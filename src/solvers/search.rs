@@ -4,10 +4,11 @@
 //! search that ends otherwise is repeated from a wider net; if the sum is still wrong, or a limit on the number
 //! of attempts or states was met, the harvest is marked incomplete.
 
+use super::atlas::Atlas;
 use super::equilibrium::{Ending, NewtonSettings, newton, orientation};
 use super::fallback::direct_search;
-use super::outcome::{NotSolved, Reason};
-use super::ultimate::{POINTS, SAME_MOTION, Search, UltimateSolver, distance};
+use super::outcome::{Motion, NotSolved, Reason};
+use super::settings::{POINTS, SAME_MOTION, Search, UltimateSettings, distance};
 use crate::mechanics::{PlaneGroup, Quadrature, Triple};
 
 /// Unbalance a coarse search must reach for an ending to be kept.
@@ -30,13 +31,18 @@ pub(super) struct Harvest {
     pub(super) trace: Vec<f64>,
 }
 
-/// Distinct endings of Newton's method for the unit load `direction`.
-pub(super) fn search(solver: &UltimateSolver<'_>, direction: &Triple) -> Result<Harvest, NotSolved> {
-    let settings = NewtonSettings { unbalance: SEARCH_UNBALANCE, ..solver.settings.newton };
+/// Distinct endings of Newton's method for the unit load `direction`; `atlas` is called when it is needed.
+pub(super) fn search<'a>(
+    group: &PlaneGroup,
+    direction: &Triple,
+    settings: &UltimateSettings,
+    atlas: impl Fn() -> &'a Atlas,
+) -> Result<Harvest, NotSolved> {
+    let newton_settings = NewtonSettings { unbalance: SEARCH_UNBALANCE, ..settings.newton };
     let mut hunt = Hunt {
-        group: solver.group,
+        group,
         direction,
-        settings,
+        settings: newton_settings,
         quadrature: Quadrature::coarse(),
         endings: Vec::new(),
         best: None,
@@ -45,18 +51,18 @@ pub(super) fn search(solver: &UltimateSolver<'_>, direction: &Triple) -> Result<
     // The elastic motion: v = F / A and omega rho = (M / rho) / A, so the load itself.
     hunt.attempt(direction);
     let mut incomplete = false;
-    if solver.settings.search == Search::All || hunt.endings.is_empty() {
-        hunt.attempt_all(&solver.atlas().starts(direction));
+    if settings.search == Search::All || hunt.endings.is_empty() {
+        hunt.attempt_all(&atlas().starts(direction));
         if hunt.signs() != 1 {
             hunt.quadrature = Quadrature::fine(POINTS[0]);
-            hunt.attempt_all(&solver.atlas().wide_starts(direction));
+            hunt.attempt_all(&atlas().wide_starts(direction));
         }
         incomplete = hunt.signs() != 1;
     }
     if hunt.endings.is_empty() {
-        let nearest = solver.atlas().nearest(direction);
+        let nearest = atlas().nearest(direction);
         for size in SIMPLICES {
-            if let Some(motion) = direct_search(solver.group, &nearest, direction, &hunt.quadrature, size) {
+            if let Some(motion) = direct_search(group, &nearest, direction, &hunt.quadrature, size) {
                 hunt.attempt(&motion);
             }
             if !hunt.endings.is_empty() {
@@ -68,7 +74,7 @@ pub(super) fn search(solver: &UltimateSolver<'_>, direction: &Triple) -> Result<
     if endings.is_empty() {
         let residual = best.map_or(f64::INFINITY, |ending| ending.state.unbalance);
         let reason = if best.is_none() { Reason::NoResistance } else { Reason::Stalled };
-        let best = best.map(|ending| solver.motion(&ending.state.q));
+        let best = best.map(|ending| Motion::of(group, &ending.state.q));
         return Err(NotSolved { reason, residual, best, trace });
     }
     Ok(Harvest { endings, incomplete, trace })

@@ -15,70 +15,28 @@
 //! Source: the method of Butler, Pal and Kulak (1972) with the laws in `mechanics::law`; AISC Manual Part 8.
 //! Valid for a plane group of positive length, for which every load has a state.
 
-use super::atlas::{Atlas, AtlasSettings};
-use super::equilibrium::{Iterate, NewtonSettings, newton};
+use super::atlas::Atlas;
+use super::equilibrium::{Iterate, newton};
 use super::outcome::{Motion, NotSolved, Place, Reason, Rupture, State, Ultimate};
-use super::path::{PathSettings, follow};
+use super::path::follow;
 use super::search::search;
+use super::settings::{POINTS, SAME_MOTION, Search, UltimateSettings, distance};
 use crate::mechanics::law::rupture_limit;
 use crate::mechanics::{PlaneGroup, Quadrature, Triple};
 use nalgebra::Vector2;
 use std::cell::OnceCell;
 
-/// Which states are looked for.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
-pub enum Search {
-    /// All states, by the atlas of the group.
-    All,
-    /// The one state that Newton's method reaches from the elastic motion; the atlas only when that fails.
-    First,
-}
-
-/// How the ultimate analysis is run.
-#[derive(Debug, Clone, PartialEq)]
-pub struct UltimateSettings {
-    /// Relative error allowed in the load factor.
-    pub tolerance: f64,
-    /// Which states are looked for.
-    pub search: Search,
-    /// Whether the path from zero load is followed for its peak.
-    pub path: bool,
-    /// Newton's method.
-    pub newton: NewtonSettings,
-    /// Sampling of the motions.
-    pub atlas: AtlasSettings,
-    /// Following the path.
-    pub path_settings: PathSettings,
-}
-
-impl Default for UltimateSettings {
-    fn default() -> Self {
-        Self {
-            tolerance: 1e-9,
-            search: Search::All,
-            path: true,
-            newton: NewtonSettings::default(),
-            atlas: AtlasSettings::default(),
-            path_settings: PathSettings::default(),
-        }
-    }
-}
-
 /// A group with what is prepared once and used for all its loads.
 #[derive(Debug)]
 pub struct UltimateSolver<'a> {
-    pub(super) group: &'a PlaneGroup,
-    pub(super) settings: UltimateSettings,
+    group: &'a PlaneGroup,
+    settings: UltimateSettings,
     atlas: OnceCell<Atlas>,
     continuous: OnceCell<PlaneGroup>,
 }
 
-/// Endings whose directions of motion differ by less than this are one state.
-pub(super) const SAME_MOTION: f64 = 1e-6;
 /// Elements up to which the atlas is sampled on the elements themselves: about as many as quadrature has nodes.
 const FEW_ELEMENTS: usize = 150;
-/// Nodes a panel of the solution, tried in turn until the tolerance is met.
-pub(super) const POINTS: [u16; 4] = [6, 10, 14, 20];
 /// Rotation (scaled by the gyration radius) over translation below which the motion is a pure translation.
 const PURE_TRANSLATION: f64 = 1e-12;
 
@@ -113,7 +71,7 @@ impl<'a> UltimateSolver<'a> {
         if !(size.is_normal() && direction.iter().all(|value| value.is_finite())) {
             return Err(failure(Reason::NotFinite, f64::INFINITY, None, Vec::new()));
         }
-        let harvest = search(self, &direction)?;
+        let harvest = search(self.group, &direction, &self.settings, || self.atlas())?;
         let mut incomplete = harvest.incomplete;
         let mut solved: Vec<Solved> = Vec::new();
         let mut refused = None;
@@ -126,9 +84,9 @@ impl<'a> UltimateSolver<'a> {
         incomplete |= refused.is_some();
         sort_and_thin(&mut solved);
         let Some(smallest) = solved.first() else {
-            let (reason, residual, best) = refused
-                .map_or((Reason::Stalled, f64::INFINITY, None), |(reason, ending)| {
-                    (reason, ending.state.unbalance, Some(self.motion(&ending.state.q)))
+            let (reason, residual, best) =
+                refused.map_or((Reason::Stalled, f64::INFINITY, None), |(reason, ending)| {
+                    (reason, ending.state.unbalance, Some(Motion::of(self.group, &ending.state.q)))
                 });
             return Err(NotSolved { reason, residual, best, trace: harvest.trace });
         };
@@ -147,8 +105,10 @@ impl<'a> UltimateSolver<'a> {
                     }
                 }
                 reached = position(&solved, &path.last);
-                let floor = reached.map_or(0.0, |index| solved[index].state.load_factor);
-                peak_load_factor = Some((path.peak / size).max(floor));
+                // The path runs on coarser quadrature than its end: where it climbs to the last, the peak is the end.
+                let end = reached.map_or(path.last_load / size, |index| solved[index].state.load_factor);
+                let climbs = path.peak <= path.last_load * (1.0 + SAME_LOAD);
+                peak_load_factor = Some(if climbs { end } else { (path.peak / size).max(end) });
             }
         }
         incomplete &= self.settings.search == Search::All;
@@ -219,17 +179,13 @@ impl<'a> UltimateSolver<'a> {
         });
         State {
             load_factor: at.load / size,
-            motion: self.motion(&(at.q * scale)),
+            motion: Motion::of(self.group, &(at.q * scale)),
             centre,
             critical,
             residual: gap.norm() / at.load,
             error_estimate: error,
             iterations,
         }
-    }
-
-    pub(super) fn motion(&self, q: &Triple) -> Motion {
-        Motion { translation: [q.x, q.y], rotation: q.z / self.group.gyration }
     }
 }
 
@@ -242,6 +198,8 @@ struct Solved {
 
 /// Motions whose directions differ by less than this are one state, when one of them ends a path.
 const SAME_END: f64 = 1e-4;
+/// Relative difference within which the peak of a path is its end.
+const SAME_LOAD: f64 = 1e-9;
 /// States beyond this number are listed once for each load factor: a group that looks the same when turned (a
 /// ring) can have a whole circle of states.
 const MOST_TWINS: usize = 9;
@@ -265,11 +223,6 @@ fn sort_and_thin(solved: &mut Vec<Solved>) {
             (a.state.load_factor - b.state.load_factor).abs() <= SAME_FACTOR * b.state.load_factor
         });
     }
-}
-
-/// Distance between the directions of two motions.
-pub(super) fn distance(one: &Triple, two: &Triple) -> f64 {
-    (one.normalize() - two.normalize()).norm()
 }
 
 fn failure(reason: Reason, residual: f64, best: Option<Motion>, trace: Vec<f64>) -> NotSolved {
