@@ -7,6 +7,9 @@
 //! * predictor: one step along t;
 //! * corrector: Newton on `[K, -L; t^T]`, which keeps the length of the step.
 //!
+//! `det [K, -L; t^T]` keeps its sign along a regular path: a step over which it changes is taken shorter, lest it
+//! leap to another branch that runs close by.
+//!
 //! The path starts at a small deformation ratio (the tangent at zero is infinite) and ends where
 //! `g(q) = max |u| / Delta_u` reaches 1 for the first time. A maximum of lambda is where `t_lambda` changes
 //! sign; it is closed in on by root finding on the step length. Where that loses the path, it is climbed by
@@ -90,7 +93,7 @@ pub fn follow(
 impl Follower<'_> {
     fn run(&self, typical: &Triple, settings: &PathSettings) -> Option<Path> {
         let mut point = self.first(typical, settings.first_ratio)?;
-        let mut tangent = self.tangent(&point, None)?;
+        let (mut tangent, mut side) = self.heading(&point, None)?;
         let mut peak = point.w;
         let mut step = settings.first_ratio.min(settings.longest_step);
         for _ in 0..settings.steps {
@@ -101,11 +104,14 @@ impl Follower<'_> {
                 }
                 continue;
             };
-            let next_tangent = self.tangent(&next, Some(&tangent))?;
-            if next_tangent.dot(&tangent) < MOST_BEND && step > settings.shortest_step {
+            let (next_tangent, next_side) = self.heading(&next, Some(&tangent))?;
+            let bends = next_tangent.dot(&tangent) < MOST_BEND && step > settings.shortest_step;
+            let leaps = next_side != side && step > LEAST_LEAP;
+            if bends || leaps {
                 step *= 0.5;
                 continue;
             }
+            side = next_side;
             let ruptured = if self.ratio(&next) >= 1.0 {
                 Some(step)
             } else {
@@ -250,8 +256,14 @@ impl Follower<'_> {
         matrix
     }
 
-    /// Unit tangent of the path at a point: along the way come, or toward growing deformation at the start.
+    /// Unit tangent of the path at a point.
     fn tangent(&self, at: &Point, before: Option<&Point>) -> Option<Point> {
+        self.heading(at, before).map(|(tangent, _)| tangent)
+    }
+
+    /// Unit tangent of the path at a point, along the way come, or toward growing deformation at the start; and
+    /// the sign of `det [K, -L; t^T]`, which a regular path keeps.
+    fn heading(&self, at: &Point, before: Option<&Point>) -> Option<(Point, bool)> {
         let q = at.xyz() * self.motion_scale;
         let resultant = self.group.resultant(&q, &self.quadrature);
         let along = match before {
@@ -263,7 +275,7 @@ impl Follower<'_> {
         };
         let matrix = self.matrix(&resultant.tangent, &along.xyz(), along.w);
         let tangent = matrix.lu().solve(&Vector4::new(0.0, 0.0, 0.0, 1.0))?.normalize();
-        tangent.iter().all(|value| value.is_finite()).then_some(tangent)
+        tangent.iter().all(|value| value.is_finite()).then_some((tangent, matrix.determinant() > 0.0))
     }
 
     /// Newton from a predicted point, square to the tangent.
@@ -296,5 +308,8 @@ impl Follower<'_> {
 const NEAR_RUPTURE: f64 = 0.85;
 /// Those steps over the longest; a half is enough for all reference joints.
 const STEP_NEAR_RUPTURE: f64 = 0.25;
+/// Longest step over which the determinant may change its sign. A longer one has left the path for another that runs
+/// close by (two branches that nearly meet); a shorter one passes a point where branches do meet, by symmetry.
+const LEAST_LEAP: f64 = 1e-5;
 /// Least cosine between successive tangents: sharper bends are taken in shorter steps.
 const MOST_BEND: f64 = 0.9;
