@@ -101,7 +101,7 @@ fn check(criterion: &mut Criterion) {
         bencher.iter(|| {
             let joint =
                 read_joint("demo", black_box(catalog::DEMO), &Options::default()).expect("the demo is valid");
-            check_text(&[analyse(&joint)], &Layout::default())
+            check_text(&[analyse(&joint)], &[], &Layout::default())
         });
     });
 }

@@ -17,7 +17,7 @@ pub(super) fn run(arguments: &CheckArguments) -> Exit {
         message::refuse(&refusal, columns);
         return Exit::NoAnswer;
     }
-    let (reports, faults) = reports(arguments, columns);
+    let Outcomes { reports, unread, faults } = outcomes(arguments, columns);
     let mut exit = reports.iter().map(|report| Exit::from(report.verdict())).max().unwrap_or(Exit::Satisfied);
     let count = sources(arguments).len();
     if reports.len() < count {
@@ -26,7 +26,7 @@ pub(super) fn run(arguments: &CheckArguments) -> Exit {
             message::notice(&format!("{} of {count} files gave no answer", count - reports.len()));
         }
     }
-    for outcome in write(arguments, &reports, &faults) {
+    for outcome in write(arguments, &reports, &unread, &faults) {
         if let Err(refusal) = outcome {
             message::refuse(&refusal, columns);
             exit = Exit::NoAnswer;
@@ -65,15 +65,24 @@ fn destinations_are_safe(arguments: &CheckArguments) -> Result<(), Box<Diagnosti
     Ok(())
 }
 
-/// The reports of all joints that could be read, and the faults of the others, already shown.
-fn reports(arguments: &CheckArguments, columns: usize) -> (Vec<Report>, Vec<Diagnostic>) {
+/// What became of the files.
+#[derive(Default)]
+struct Outcomes {
+    reports: Vec<Report>,
+    /// Names of the files that gave no joint.
+    unread: Vec<String>,
+    /// Their faults, already shown.
+    faults: Vec<Diagnostic>,
+}
+
+fn outcomes(arguments: &CheckArguments, columns: usize) -> Outcomes {
     let options = Options {
         set: arguments.set.clone(),
         elements: arguments.elements,
         law: arguments.law.clone(),
         rules: arguments.rules.clone(),
     };
-    let (mut reports, mut faults) = (Vec::new(), Vec::new());
+    let mut outcomes = Outcomes::default();
     for source in sources(arguments) {
         let (text, outcome) = match source.read() {
             Ok(text) => {
@@ -83,20 +92,22 @@ fn reports(arguments: &CheckArguments, columns: usize) -> (Vec<Report>, Vec<Diag
             Err(refusal) => (None, Err(vec![*refusal])),
         };
         match outcome {
-            Ok(joint) => reports.push(analyse(&joint)),
+            Ok(joint) => outcomes.reports.push(analyse(&joint)),
             Err(found) => {
                 message::show(&found, text.as_ref(), columns);
-                faults.extend(found);
+                outcomes.unread.push(source.name());
+                outcomes.faults.extend(found);
             }
         }
     }
-    (reports, faults)
+    outcomes
 }
 
 /// Writes the results and the element table; the outcome of each.
 fn write(
     arguments: &CheckArguments,
     reports: &[Report],
+    unread: &[String],
     faults: &[Diagnostic],
 ) -> Vec<Result<(), Box<Diagnostic>>> {
     let results = Destination::from(arguments.output.as_ref());
@@ -109,7 +120,7 @@ fn write(
         outcomes.push(match arguments.format {
             CheckFormat::Text => {
                 let layout = colour::layout(arguments.width, arguments.all_cases, &results);
-                results.write_text(&check_text(reports, &layout))
+                results.write_text(&check_text(reports, unread, &layout))
             }
             CheckFormat::Json => results.write(&check_json(VERSION, reports, faults)),
             CheckFormat::Csv => results.write(&summary_csv(reports)),

@@ -37,7 +37,7 @@ impl From<&PathBuf> for Source {
 
 impl Source {
     /// What the source is called.
-    fn name(&self) -> String {
+    pub(super) fn name(&self) -> String {
         match self {
             Self::File(path) => path.display().to_string(),
             Self::StandardInput => "-".to_owned(),

@@ -2,7 +2,7 @@
 
 use super::{case, cases, words};
 use crate::analysis::{Analyses, Finding, Grade, Report, Section};
-use crate::model::{Confirmation, DesignFactor, Joint};
+use crate::model::{Confirmation, DesignFactor, Joint, LawForm};
 use crate::output::layout::{Emphasis, Layout};
 use crate::output::number::{length, people, point, power_of_length};
 use crate::output::table::{hanging, labelled, wrap};
@@ -55,8 +55,11 @@ fn deciding(report: &Report) -> String {
 fn input(report: &Report, layout: &Layout) -> String {
     let joint = &report.joint;
     let rules = &joint.rules;
-    let loads =
-        if joint.combined { "combinations of factored cases" } else { "cases taken as factored already" };
+    let loads = if joint.combined {
+        "combinations of factored cases"
+    } else {
+        "cases taken as factored (for ASD: combined) already"
+    };
     let mut rows = vec![
         ("File", joint.file.clone()),
         ("Rules", format!("{} ({}); {}", rules.title, rules.id, words::confirmation(rules.status()))),
@@ -69,9 +72,10 @@ fn input(report: &Report, layout: &Layout) -> String {
 }
 
 fn law(joint: &Joint) -> String {
-    let recalled = match joint.law.status {
-        Confirmation::Read => "",
-        Confirmation::Recalled => "; coefficients recalled",
+    let recalled = match (&joint.law.form, joint.law.status) {
+        (LawForm::Table(_), _) => "; given in the joint file",
+        (_, Confirmation::Read) => "",
+        (_, Confirmation::Recalled) => "; coefficients recalled",
     };
     format!("{} ({}); {}{recalled}", joint.law.title, joint.law.id, words::discretisation(joint))
 }

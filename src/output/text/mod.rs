@@ -10,15 +10,16 @@ mod joint;
 mod words;
 
 use super::layout::{Emphasis, Layout};
+use super::number::MISSING;
 use super::table::{Cell, Side, Table, clip};
 use crate::analysis::{Report, Status};
 
-/// The reports of one run as text.
+/// The reports of one run as text; `unread` names the files that gave no joint, so that none goes unseen.
 #[must_use]
-pub fn check_text(reports: &[Report], layout: &Layout) -> String {
+pub fn check_text(reports: &[Report], unread: &[String], layout: &Layout) -> String {
     let mut blocks = Vec::new();
-    if reports.len() > 1 {
-        blocks.push(overview(reports, layout));
+    if reports.len() + unread.len() > 1 {
+        blocks.push(overview(reports, unread, layout));
     }
     for (index, report) in reports.iter().enumerate() {
         let rule = if reports.len() > 1 { separator(index, reports.len(), layout) } else { String::new() };
@@ -37,19 +38,20 @@ fn separator(index: usize, count: usize, layout: &Layout) -> String {
 }
 
 /// One line per joint.
-fn overview(reports: &[Report], layout: &Layout) -> String {
+fn overview(reports: &[Report], unread: &[String], layout: &Layout) -> String {
     let count = |status: Status| reports.iter().filter(|report| report.verdict() == status).count();
     let counts = [
         (count(Status::Satisfied), "satisfied"),
         (count(Status::Exceeded), "exceeded"),
         (count(Status::NotSolved), "not solved"),
+        (unread.len(), "not read"),
     ];
     let parts: Vec<String> = counts
         .iter()
         .filter(|(count, _)| *count > 0)
         .map(|(count, word)| format!("{count} {word}"))
         .collect();
-    let heading = format!("{} joints: {}", reports.len(), parts.join(", "));
+    let heading = format!("{} joints: {}", reports.len() + unread.len(), parts.join(", "));
     let mut table =
         Table::new(&[("", Side::Left), ("", Side::Right), ("", Side::Flexible), ("", Side::Left)]);
     for report in reports {
@@ -61,6 +63,14 @@ fn overview(reports: &[Report], layout: &Layout) -> String {
             clip(&report.joint.file, layout.columns() / 3).into(),
         ]);
     }
+    for file in unread {
+        table.row(vec![
+            Cell::emphasised("NOT READ", Emphasis::NotSolved),
+            MISSING.into(),
+            "see the messages on standard error".into(),
+            clip(file, layout.columns() / 3).into(),
+        ]);
+    }
     format!("{}\n{}", (layout.paint)(Emphasis::Heading, &heading), table.render(2, layout))
 }
 
@@ -70,7 +80,7 @@ mod tests {
     use crate::output::fixture;
 
     fn one(report: Report) -> String {
-        check_text(&[report], &Layout::default())
+        check_text(&[report], &[], &Layout::default())
     }
 
     #[test]
@@ -90,7 +100,7 @@ mod tests {
     fn all_cases_are_shown_in_detail_on_request() {
         let cases = vec![fixture::case("wind", 2.0), fixture::case("crane", 1.25)];
         let layout = Layout { all_cases: true, ..Layout::default() };
-        let text = check_text(&[fixture::report(cases, Some(1))], &layout);
+        let text = check_text(&[fixture::report(cases, Some(1))], &[], &layout);
         assert!(text.contains("Case crane") && text.contains("Case wind"), "{text}");
     }
 
@@ -123,7 +133,7 @@ mod tests {
         long.joint.title = "A title that goes on and on ".repeat(8);
         for width in [72, 80, 120] {
             let layout = Layout { width, all_cases: true, ..Layout::default() };
-            let text = check_text(&[long.clone(), long.clone()], &layout);
+            let text = check_text(&[long.clone(), long.clone()], &[], &layout);
             for line in text.lines() {
                 assert!(line.chars().count() <= width, "{width}: {line}");
             }
@@ -134,7 +144,8 @@ mod tests {
     fn several_joints_open_with_their_verdicts() {
         let good = fixture::report(vec![fixture::case("crane", 2.0)], Some(0));
         let bad = fixture::report(vec![fixture::case("crane", 1.25)], Some(0));
-        let text = check_text(&[good, bad], &Layout::default());
-        assert!(text.starts_with("2 joints: 1 satisfied, 1 exceeded\n"), "{text}");
+        let text = check_text(&[good, bad], &["slip.toml".to_owned()], &Layout::default());
+        assert!(text.starts_with("3 joints: 1 satisfied, 1 exceeded, 1 not read\n"), "{text}");
+        assert!(text.contains("NOT READ"), "{text}");
     }
 }
