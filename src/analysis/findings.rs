@@ -274,7 +274,7 @@ fn about_loads(joint: &Joint) -> Vec<Finding> {
         findings.push(finding(
             Grade::Note,
             "loads",
-            "no combinations: the load cases are taken as factored already".into(),
+            "no combinations: the load cases are taken as factored (for ASD: combined) already".into(),
         ));
     }
     for case in &joint.unused_cases {

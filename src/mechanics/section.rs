@@ -50,7 +50,10 @@ impl Section {
             throat_area += weld.total_throat() * run.length();
             first += middle_moment(run, origin) * weld.total_throat();
         }
-        let centroid = origin + first / throat_area;
+        let centroid = (origin + first / throat_area).map(|coordinate| {
+            // What rounding leaves of a zero, against the size of the group.
+            if coordinate.abs() <= 4.0 * f64::EPSILON * length { 0.0 } else { coordinate }
+        });
         let (mut i_x, mut i_y, mut i_xy) = (0.0, 0.0, 0.0);
         for (weld, run) in throats_and_runs() {
             let [xx, yy, xy] = second_moments(run, centroid);

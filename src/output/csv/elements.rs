@@ -82,7 +82,7 @@ fn fields(row: &ElementRow, joint: &Joint, labels: [&str; 2], units: UnitSystem)
         length(row.at.z),
         length(row.length),
         optional_length(weld.and_then(|weld| weld.size.leg())),
-        optional_length(weld.map(|weld| weld.size.throat())),
+        optional_length(weld.map(|weld| weld.total_throat())),
         field(row.angle.map(f64::to_degrees)),
         optional_length(row.deformation),
         field(row.deformation_ratio),
