@@ -113,7 +113,12 @@ pub(super) fn read(text: &str, faults: &mut Faults<'_>) -> Option<Table> {
             continue;
         }
         let reported = faults.at(span, format!("not valid TOML: {}", lower_first(what)));
-        if let Some(expected) = expected {
+        let unquoted = what.contains("string values must be quoted") || expected == Some("`nan`");
+        if unquoted {
+            reported
+                .accepted("a number, or a text in straight quotes")
+                .hint("write a text as \"nominal\" or \"1/4 in\"");
+        } else if let Some(expected) = expected {
             reported.accepted(expected);
         }
     }

@@ -162,6 +162,33 @@ points = [[0, 0], [0.05, 1.4], [0.15, 1.5]]
     assert!(state.residual <= 1e-9 && state.error_estimate <= 1e-9);
 }
 
+/// Two lines loaded 0.02 mm beside their centroid: the symmetric branch of the path and the one it follows nearly meet,
+/// and a long step leapt to the wrong one (339.76). Independent: the reference program ends in the state 362.4855.
+#[test]
+fn a_path_does_not_leap_to_a_branch_close_by() {
+    let lines = "
+[[weld]]
+name = \"left\"
+leg = 8
+path = [[-77, -50], [-77, 50]]
+[[weld]]
+name = \"right\"
+leg = 8
+path = [[77, -50], [77, 50]]
+[[load]]
+case = \"a\"
+at = [0, 0]
+force = [0.403683009, 0.914898917]
+moment = -17.594836e-6
+";
+    let report = report(&joint("rules = \"nominal\"", lines));
+    let answer = only(&report).ultimate().unwrap();
+    assert_eq!(answer.states.len(), 3);
+    let reached = answer.states[answer.reached.unwrap()].load_factor;
+    assert!((reached - 362.485_475_207).abs() < 1e-6, "{reached}");
+    assert!((answer.peak_load_factor.unwrap() - 375.591_500_065).abs() < 1e-6);
+}
+
 #[test]
 fn welds_that_lie_on_each_other_and_very_long_ones_are_pointed_out() {
     let welds = "
