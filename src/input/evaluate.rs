@@ -292,6 +292,8 @@ mod tests {
         assert_eq!(value("bb").unwrap_err(), "there is no parameter `bb`");
         assert_eq!(value("bad + 1").unwrap_err(), "reported");
         assert_eq!(value("mm").unwrap_err(), "the unit `mm` has no number");
+        assert_eq!(value("50 kip-in").unwrap_err(), "`kip-in` is not a unit");
+        assert_eq!(value("5-1/2 in").unwrap_err(), "`5-1/2` can be read as a difference");
         assert_eq!(value("12 kNm").unwrap_err(), "`kNm` behind a number is not a unit");
         assert_eq!(value("2 b").unwrap_err(), "`b` behind a number is not a unit");
         assert_eq!(value("b n").unwrap_err(), "an operator is missing before `n`");

@@ -33,12 +33,41 @@ pub(super) fn parse(text: &str) -> Result<Vec<Step>, ExpressionFault> {
         return Err(ExpressionFault::new(0..text.len(), "the text is empty")
             .accepted("a number with its unit or an expression"));
     }
+    if let Some(fault) = hyphenated(text, &tokens) {
+        return Err(fault);
+    }
     let mut parser = Parser { text, tokens, next: 0, depth: 0, steps: Vec::new() };
     parser.sum()?;
     match parser.peek() {
         None => Ok(parser.steps),
         Some(token) => Err(parser.unexpected(token)),
     }
+}
+
+/// Customary spellings with a hyphen, which would be read as a difference: `5-1/2 in`, `50 kip-in`.
+fn hyphenated(text: &str, tokens: &[(Token<'_>, Span)]) -> Option<ExpressionFault> {
+    let is_unit = |token: &Token<'_>| matches!(token, Token::Name(name) if unit(name).is_some());
+    for (at, window) in tokens.windows(3).enumerate() {
+        let [(before, left), (Token::Sign('-'), hyphen), (after, right)] = window else { continue };
+        if left.end != hyphen.start || hyphen.end != right.start {
+            continue;
+        }
+        let rest = &tokens[at + 3..];
+        let fraction =
+            matches!(rest, [(Token::Sign('/'), _), (Token::Number(..), _), (name, _), ..] if is_unit(name));
+        if is_unit(before) && is_unit(after) {
+            let (one, two) = (&text[left.clone()], &text[right.clone()]);
+            let fault = ExpressionFault::new(left.start..right.end, format!("`{one}-{two}` is not a unit"));
+            return Some(fault.hint(format!("a product of units is written with a space: `{one} {two}`")));
+        }
+        if matches!((before, after), (Token::Number(..), Token::Number(..))) && fraction {
+            let span = left.start..rest[1].1.end;
+            let (whole, part) = (&text[left.clone()], &text[right.start..rest[1].1.end]);
+            let fault = ExpressionFault::new(span, format!("`{whole}-{part}` can be read as a difference"));
+            return Some(fault.hint(format!("a mixed number is written with a space: `{whole} {part}`")));
+        }
+    }
+    None
 }
 
 /// A text being parsed.
