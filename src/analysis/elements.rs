@@ -9,6 +9,8 @@ use crate::solvers::{Elastic, Motion, State};
 const CELLS: usize = 20;
 /// Nodes a panel for the cell integrals: as fine as the solution itself.
 const POINTS: u16 = 12;
+/// Nodes for the elastic cell integrals: exact to rounding for a cell that is a whole turn of an arc.
+const ELASTIC_POINTS: u16 = 24;
 
 /// The rows of one case; `state` is the governing state of the ultimate analysis, where there is one.
 pub(super) fn rows(
@@ -23,17 +25,18 @@ pub(super) fn rows(
     };
     let quadrature = Quadrature::fine(POINTS);
     let cells = group.cells(&joint.group, count);
+    let elastic_quadrature = Quadrature::fine(ELASTIC_POINTS);
     let stress = scaled(&elastic.stress_motion, group);
+    let rupture = state.map(|state| (scaled(&state.motion, group), state.load_factor));
     let row = |cell: &Cell| {
         let weld = &joint.group.welds()[cell.weld];
         let throat = weld.total_throat();
-        let wrench = group.cell_of_linear_field(cell, &stress, throat);
+        let wrench = group.cell_of_linear_field(cell, &stress, throat, &elastic_quadrature);
         let (middle, greatest) = group.linear_field_in(cell, &stress);
-        let ultimate = state.map(|state| {
-            let q = scaled(&state.motion, group);
-            let wrench = group.cell_wrench(cell, &q, &quadrature) / state.load_factor;
+        let ultimate = rupture.map(|(q, load_factor)| {
+            let wrench = group.cell_wrench(cell, &q, &quadrature) / load_factor;
             let local = group.local_state(cell, &q);
-            (local, force(group, &wrench, local.force_per_length / state.load_factor))
+            (local, force(group, &wrench, local.force_per_length / load_factor))
         });
         let strength = joint.rules.longitudinal.value * weld.filler.strength;
         ElementRow {

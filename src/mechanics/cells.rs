@@ -11,10 +11,9 @@
 
 use super::law::{Direction, response, rupture_limit};
 use super::panels::{Panels, Quadrature};
-use super::plane::{PlaneGroup, Shape, Triple, along_and_across, as_float, cell_count, displacement};
+use super::plane::{PlaneGroup, Triple, along_and_across, as_float, cell_count, displacement};
 use super::resultant::Resultant;
 use crate::model::{Run, Vector, WeldGroup};
-use crate::numerics::GaussLegendre;
 use nalgebra::Vector2;
 
 /// A part of a run.
@@ -99,12 +98,7 @@ impl PlaneGroup {
             return sum.wrench;
         }
         let piece = &self.pieces[cell.piece];
-        let mut panels = Panels::default();
-        panels.cut(self, piece, q, cell.range, quadrature);
-        panels.visit(&quadrature.rule, |parameter, weight| {
-            let (at, tangent) = piece.frame(parameter);
-            sum.add(self, q, &at, &tangent, piece.strength * piece.stretch() * weight, piece.size);
-        });
+        sum.integrate(self, piece, cell.range, q, quadrature, &mut Panels::default());
         sum.wrench
     }
 
@@ -131,17 +125,22 @@ impl PlaneGroup {
     }
 
     /// The integral over a cell of a linear field `v + omega x r` (per throat area), times the throat (mm):
-    /// (F_x, F_y, M / rho).
+    /// (F_x, F_y, M / rho). The integrand is quadratic on a straight run, and on an arc a product of two sines over at
+    /// most one turn, for which one panel of 24 nodes is enough: only the nodes of `quadrature` are used.
     #[must_use]
-    pub fn cell_of_linear_field(&self, cell: &Cell, field: &Triple, throat: f64) -> Triple {
+    pub fn cell_of_linear_field(
+        &self,
+        cell: &Cell,
+        field: &Triple,
+        throat: f64,
+        quadrature: &Quadrature,
+    ) -> Triple {
         let piece = &self.pieces[cell.piece];
         let (low, high) = cell.range;
         let (middle, half) = (0.5 * (low + high), 0.5 * (high - low));
         let factor = throat * piece.stretch() * self.gyration * half;
-        // Quadratic on a straight run; on an arc a product of two sines over at most one turn.
-        let points = if matches!(piece.shape, Shape::Straight { .. }) { 2 } else { 24 };
         let mut sum = Triple::zeros();
-        for (x, weight) in GaussLegendre::new(points).iter() {
+        for (x, weight) in quadrature.rule.iter() {
             let (at, _) = piece.frame(middle + half * x);
             let u = displacement(field, &at);
             sum += Triple::new(u.x, u.y, at.perp(&u)) * (weight * factor);

@@ -17,7 +17,7 @@
 //! | - | `Foot::at` | scaled length or rad | parameter of a foot |
 //! | h | `Foot::scale` | scaled length or rad | `|u_t| / |d u_n / d s|` at the foot |
 //!
-//! Source: standard graded quadrature; the cuts were chosen by measurement (see the tests of `resultant`).
+//! Source: standard graded quadrature; the cuts were chosen by measurement (`tests/suite/reference.rs` holds the result).
 
 use super::law;
 use super::plane::{Piece, PlaneGroup, Shape, Triple, along_and_across, displacement};
@@ -143,7 +143,6 @@ impl Panels {
     ) {
         let size = of_centre.norm();
         let turning = q.z * radius;
-        let mut parts = ((high - low) / WIDEST_ARC_PANEL).ceil().max(1.0);
         if size > 0.0 {
             let toward = of_centre.y.atan2(of_centre.x);
             for (foot, along) in [(toward + FRAC_PI_2, turning - size), (toward - FRAC_PI_2, turning + size)]
@@ -162,9 +161,11 @@ impl Panels {
             self.cuts.extend(turns(toward, low, high));
             self.cuts.extend(turns(toward + PI, low, high));
         }
-        while parts > 1.0 {
-            parts -= 1.0;
-            self.cuts.push(low + parts * (high - low) / ((high - low) / WIDEST_ARC_PANEL).ceil());
+        let parts = ((high - low) / WIDEST_ARC_PANEL).ceil();
+        let mut part = 1.0;
+        while part < parts {
+            self.cuts.push(low + part * (high - low) / parts);
+            part += 1.0;
         }
     }
 

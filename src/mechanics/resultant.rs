@@ -17,7 +17,7 @@
 
 use super::law::{Direction, response};
 use super::panels::{Panels, Quadrature};
-use super::plane::{PlaneGroup, Triple, along_and_across, displacement};
+use super::plane::{Piece, PlaneGroup, Triple, along_and_across, displacement};
 use nalgebra::{Matrix3, Vector2};
 
 /// A wrench and its tangent.
@@ -42,18 +42,31 @@ impl PlaneGroup {
         }
         let mut panels = Panels::default();
         for piece in &self.pieces {
-            panels.cut(self, piece, q, piece.range(), quadrature);
-            let strength = piece.strength * piece.stretch();
-            panels.visit(&quadrature.rule, |parameter, weight| {
-                let (at, tangent) = piece.frame(parameter);
-                sum.add(self, q, &at, &tangent, strength * weight, piece.size);
-            });
+            sum.integrate(self, piece, piece.range(), q, quadrature, &mut panels);
         }
         sum
     }
 }
 
 impl Resultant {
+    /// Adds the integral over the part `range` of a piece.
+    pub(super) fn integrate(
+        &mut self,
+        group: &PlaneGroup,
+        piece: &Piece,
+        range: (f64, f64),
+        q: &Triple,
+        quadrature: &Quadrature,
+        panels: &mut Panels,
+    ) {
+        panels.cut(group, piece, q, range, quadrature);
+        let strength = piece.strength * piece.stretch();
+        panels.visit(&quadrature.rule, |parameter, weight| {
+            let (at, tangent) = piece.frame(parameter);
+            self.add(group, q, &at, &tangent, strength * weight, piece.size);
+        });
+    }
+
     /// Adds the force of a stretch of weld of longitudinal strength `strength` (N) at a point.
     pub(super) fn add(
         &mut self,
