@@ -81,6 +81,15 @@ pub fn rupture_limit(law: &Law, angle: f64) -> Option<(f64, f64)> {
     }
 }
 
+/// Whether the law has a deformation limit at all.
+#[must_use]
+pub fn ruptures(law: &Law) -> bool {
+    match &law.form {
+        LawForm::LesikKennedy { .. } | LawForm::ButlerPalKulak { .. } | LawForm::Table(_) => true,
+        LawForm::RigidPlastic { .. } => false,
+    }
+}
+
 /// Whether the rupture deformation never grows with the angle, so that a straight run ruptures at an end.
 #[must_use]
 pub fn ruptures_at_ends(law: &Law) -> bool {

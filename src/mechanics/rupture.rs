@@ -14,7 +14,7 @@
 //! a ridge; the place moves with q so that u_t stays zero, and the gradient follows it).
 //! For a law without limit `g = |q|`, a mere normalisation.
 
-use super::law::{Direction, rupture_limit};
+use super::law::{Direction, rupture_limit, ruptures};
 use super::plane::{Piece, PlaneGroup, Shape, Triple, along_and_across, displacement};
 use crate::numerics::maximise;
 use nalgebra::Vector2;
@@ -100,7 +100,7 @@ impl PlaneGroup {
             }
         }
         let mut utmost = best?;
-        if rupture_limit(&self.law, 0.0).is_none() {
+        if !ruptures(&self.law) {
             let size = q.norm();
             utmost.ratio = size;
             utmost.gradient = q / size;

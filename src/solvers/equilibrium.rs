@@ -16,9 +16,9 @@
 //! | lambda | `load` | N | size of the load carried along L |
 //! | - | `unbalance` | - | `|W / |W| - L|`, zero in equilibrium |
 
-use crate::mechanics::law::rupture_limit;
+use crate::mechanics::law::ruptures;
 use crate::mechanics::{PlaneGroup, Quadrature, Resultant, Triple, Utmost};
-use nalgebra::{Matrix4, Vector4};
+use nalgebra::{Matrix3, Matrix4, Vector4};
 
 /// A motion at first rupture and what it carries.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -74,7 +74,7 @@ impl Iterate {
         let q = q * scale;
         let utmost = Utmost { ratio, deformation: utmost.deformation * scale, ..utmost };
         let mut resultant = group.resultant(&q, quadrature);
-        if rupture_limit(&group.law, 0.0).is_none() {
+        if !ruptures(&group.law) {
             resultant.tangent = group.resultant(&nudged(&q), quadrature).tangent;
         }
         let size = resultant.wrench.norm();
@@ -105,10 +105,16 @@ const NUDGE: f64 = 1e-6;
 
 /// The matrix `[K, -L; (dg/dq)^T, 0]`, rows of force scaled by the wrench, columns by the motion.
 fn bordered(state: &Iterate, direction: &Triple) -> Matrix4<f64> {
+    framed(&state.resultant.tangent, direction, &(state.utmost.gradient * state.load.abs()), 0.0)
+}
+
+/// The matrix `[K, -L; r^T, corner]`.
+pub(super) fn framed(tangent: &Matrix3<f64>, load: &Triple, row: &Triple, corner: f64) -> Matrix4<f64> {
     let mut matrix = Matrix4::zeros();
-    matrix.fixed_view_mut::<3, 3>(0, 0).copy_from(&state.resultant.tangent);
-    matrix.fixed_view_mut::<3, 1>(0, 3).copy_from(&(-direction));
-    matrix.fixed_view_mut::<1, 3>(3, 0).copy_from(&(state.utmost.gradient.transpose() * state.load.abs()));
+    matrix.fixed_view_mut::<3, 3>(0, 0).copy_from(tangent);
+    matrix.fixed_view_mut::<3, 1>(0, 3).copy_from(&(-load));
+    matrix.fixed_view_mut::<1, 3>(3, 0).copy_from(&row.transpose());
+    matrix[(3, 3)] = corner;
     matrix
 }
 
@@ -189,11 +195,7 @@ const LONGEST_STEP: f64 = 1.0;
 /// the bordered matrix with the load along W itself. Positive where the map keeps orientation.
 #[must_use]
 pub fn orientation(resultant: &Resultant, utmost: &Utmost) -> f64 {
-    let mut matrix = Matrix4::zeros();
-    matrix.fixed_view_mut::<3, 3>(0, 0).copy_from(&resultant.tangent);
-    matrix.fixed_view_mut::<3, 1>(0, 3).copy_from(&(-resultant.wrench.normalize()));
-    matrix.fixed_view_mut::<1, 3>(3, 0).copy_from(&utmost.gradient.transpose());
-    matrix.determinant()
+    framed(&resultant.tangent, &resultant.wrench.normalize(), &utmost.gradient, 0.0).determinant()
 }
 
 impl Iterate {

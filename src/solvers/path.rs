@@ -23,7 +23,7 @@
 //!
 //! Source: E. Riks, J. Appl. Mech. 39 (1972) 1060 (continuation by arc length).
 
-use super::equilibrium::{NewtonSettings, newton};
+use super::equilibrium::{Iterate, NewtonSettings, framed, newton};
 use crate::mechanics::{PlaneGroup, Quadrature, Triple};
 use crate::numerics::{maximise, root};
 use nalgebra::{Matrix4, Vector4};
@@ -159,17 +159,11 @@ impl Follower<'_> {
     /// It cannot turn back, but passes points where the equations have a kink all along the path (a ring that
     /// turns about its centre: theta is zero everywhere).
     fn climb(&self, typical: &Triple, settings: &PathSettings) -> Option<Path> {
-        let at = |start: &Triple, ratio: f64| {
-            let newton_settings = NewtonSettings { ratio, ..NewtonSettings::default() };
-            newton(self.group, start, &self.direction, &self.quadrature, &newton_settings)
-                .filter(|ending| ending.converged)
-                .map(|ending| ending.state)
-        };
         let mut levels = Vec::new();
         let mut q = *typical;
         let mut ratio = settings.first_ratio;
         loop {
-            let state = at(&q, ratio)?;
+            let state = self.at_ratio(&q, ratio)?;
             q = state.q;
             levels.push((ratio, state));
             if ratio >= 1.0 {
@@ -182,7 +176,8 @@ impl Follower<'_> {
         let mut peak = load(highest);
         if highest > 0 && highest + 1 < levels.len() {
             let (from, to) = (levels[highest - 1].0, levels[highest + 1].0);
-            let height = |ratio: f64| at(&levels[highest].1.q, ratio).map_or(0.0, |state| state.load);
+            let height =
+                |ratio: f64| self.at_ratio(&levels[highest].1.q, ratio).map_or(0.0, |state| state.load);
             peak = peak.max(maximise(height, from, to).1);
         }
         let last = levels.last()?.1;
@@ -221,39 +216,24 @@ impl Follower<'_> {
         self.corrected(&(point + tangent * length), tangent).map(|at| at.w)
     }
 
-    /// The point of the path where the deformation ratio is `ratio`, by Newton on `g(q) = ratio`.
+    /// The point of the path where the deformation ratio is `ratio`.
     fn first(&self, typical: &Triple, ratio: f64) -> Option<Point> {
-        let mut q = typical * (ratio / self.group.utmost(typical)?.ratio);
-        let mut best = f64::INFINITY;
-        for _ in 0..60 {
-            let utmost = self.group.utmost(&q)?;
-            q *= ratio / utmost.ratio;
-            let resultant = self.group.resultant(&q, &self.quadrature);
-            let load = resultant.wrench.dot(&self.direction);
-            let gap = resultant.wrench - self.direction * load;
-            let unbalance = gap.norm() / resultant.wrench.norm();
-            if unbalance < 1e-11 && load > 0.0 {
-                let scaled = q / self.motion_scale;
-                return Some(Point::new(scaled.x, scaled.y, scaled.z, load / self.load_scale));
-            }
-            let matrix = self.matrix(&resultant.tangent, &utmost.gradient, 0.0);
-            let right = Vector4::new(-gap.x, -gap.y, -gap.z, 0.0) / self.load_scale;
-            let change = matrix.lu().solve(&right)?.xyz() * self.motion_scale;
-            let longest = if unbalance < best { 1.0 } else { 0.5 };
-            best = best.min(unbalance);
-            q += change * (longest * q.norm() / change.norm()).min(1.0);
-        }
-        None
+        let state = self.at_ratio(typical, ratio)?;
+        let scaled = state.q / self.motion_scale;
+        Some(Point::new(scaled.x, scaled.y, scaled.z, state.load / self.load_scale))
+    }
+
+    /// Equilibrium at a deformation ratio, by the damped Newton method from the motion `start`.
+    fn at_ratio(&self, start: &Triple, ratio: f64) -> Option<Iterate> {
+        let settings = NewtonSettings { ratio, ..NewtonSettings::default() };
+        newton(self.group, start, &self.direction, &self.quadrature, &settings)
+            .filter(|ending| ending.converged && ending.state.load > 0.0)
+            .map(|ending| ending.state)
     }
 
     /// `[K, -L; border]` in scaled unknowns and loads.
     fn matrix(&self, tangent: &nalgebra::Matrix3<f64>, border: &Triple, last: f64) -> Matrix4<f64> {
-        let mut matrix = Matrix4::zeros();
-        matrix.fixed_view_mut::<3, 3>(0, 0).copy_from(&(tangent * (self.motion_scale / self.load_scale)));
-        matrix.fixed_view_mut::<3, 1>(0, 3).copy_from(&(-self.direction));
-        matrix.fixed_view_mut::<1, 3>(3, 0).copy_from(&border.transpose());
-        matrix[(3, 3)] = last;
-        matrix
+        framed(&(tangent * (self.motion_scale / self.load_scale)), &self.direction, border, last)
     }
 
     /// Unit tangent of the path at a point.

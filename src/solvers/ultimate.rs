@@ -21,7 +21,7 @@ use super::outcome::{Motion, NotSolved, Place, Reason, Rupture, State, Ultimate}
 use super::path::follow;
 use super::search::search;
 use super::settings::{POINTS, SAME_MOTION, Search, UltimateSettings, distance};
-use crate::mechanics::law::rupture_limit;
+use crate::mechanics::law::{rupture_limit, ruptures};
 use crate::mechanics::{PlaneGroup, Quadrature, Triple};
 use nalgebra::Vector2;
 use std::cell::OnceCell;
@@ -69,7 +69,8 @@ impl<'a> UltimateSolver<'a> {
         let size = load.norm();
         let direction = load / size;
         if !(size.is_normal() && direction.iter().all(|value| value.is_finite())) {
-            return Err(failure(Reason::NotFinite, f64::INFINITY, None, Vec::new()));
+            let (residual, trace) = (f64::INFINITY, Vec::new());
+            return Err(NotSolved { reason: Reason::NotFinite, residual, best: None, trace });
         }
         let harvest = search(self.group, &direction, &self.settings, || self.atlas())?;
         let mut incomplete = harvest.incomplete;
@@ -91,7 +92,7 @@ impl<'a> UltimateSolver<'a> {
             return Err(NotSolved { reason, residual, best, trace: harvest.trace });
         };
         let (mut peak_load_factor, mut reached) = (None, None);
-        if rupture_limit(&self.group.law, 0.0).is_none() {
+        if !ruptures(&self.group.law) {
             peak_load_factor = Some(smallest.state.load_factor);
             reached = Some(0);
         } else if self.settings.path {
@@ -223,8 +224,4 @@ fn sort_and_thin(solved: &mut Vec<Solved>) {
             (a.state.load_factor - b.state.load_factor).abs() <= SAME_FACTOR * b.state.load_factor
         });
     }
-}
-
-fn failure(reason: Reason, residual: f64, best: Option<Motion>, trace: Vec<f64>) -> NotSolved {
-    NotSolved { reason, residual, best, trace }
 }
