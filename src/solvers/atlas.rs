@@ -9,8 +9,8 @@
 //! on whole runs), so the grid is graded in latitude toward `beta = 0` and in azimuth toward the directions of
 //! the runs; rotations about the centre of an arc, where theta is zero all along it, are ringed by samples of
 //! their own. A cell is suspect when the map turns over in it: the Jacobian
-//! `det [K, -W/|W|; (dg/dq)^T, 0]` is negative at a corner or on either side of a change of the rupturing
-//! point along an edge, or a triangle of images is turned over. Suspect cells are quartered repeatedly.
+//! `det [K, -W/|W|; (dg/dq)^T, 0]` has different signs at its corners or next to a change of the rupturing point
+//! along an edge, or a triangle of images is turned the other way. Suspect cells are quartered repeatedly.
 //!
 //! A load is looked up in every triangle of images, with a margin; each hit gives a start for Newton's method.
 //!
@@ -94,8 +94,6 @@ struct Patch {
 pub struct Atlas {
     patches: Vec<Patch>,
     margin: f64,
-    suspects: usize,
-    folded: bool,
 }
 
 impl Atlas {
@@ -104,24 +102,6 @@ impl Atlas {
     pub fn new(group: &PlaneGroup, settings: &AtlasSettings) -> Self {
         let surveyor = Surveyor { group, quadrature: Quadrature::coarse(), settings };
         surveyor.survey()
-    }
-
-    /// Whether the map folds somewhere: only then can a load have several states.
-    #[must_use]
-    pub fn folds(&self) -> bool {
-        self.folded
-    }
-
-    /// Number of suspect cells.
-    #[must_use]
-    pub fn suspects(&self) -> usize {
-        self.suspects
-    }
-
-    /// Number of triangles.
-    #[must_use]
-    pub fn size(&self) -> usize {
-        self.patches.len()
     }
 
     /// Motions from which Newton's method is to start for the unit load `direction`, in a fixed order.
@@ -211,8 +191,7 @@ struct Surveyor<'a> {
 
 impl Surveyor<'_> {
     fn survey(&self) -> Atlas {
-        let mut atlas =
-            Atlas { patches: Vec::new(), margin: self.settings.margin, suspects: 0, folded: false };
+        let mut atlas = Atlas { patches: Vec::new(), margin: self.settings.margin };
         let latitudes: Vec<f64> =
             self.settings.latitudes.iter().map(|degrees| degrees.to_radians()).collect();
         let globe = |azimuth: f64, latitude: f64| {
@@ -344,8 +323,6 @@ impl Surveyor<'_> {
                 return;
             }
         }
-        atlas.suspects += usize::from(suspect);
-        atlas.folded |= suspect || corners.iter().any(|corner| corner.keeps == Some(false));
         // A cell at a pole is a triangle.
         let same = |one: &Sample, two: &Sample| (one.motion - two.motion).norm() < 1e-12;
         if !same(a, b) {
