@@ -67,13 +67,38 @@ impl Wrench {
     }
 }
 
+/// One load as it acts in a case: factors of combinations are included.
+#[derive(Debug, Clone, PartialEq)]
+pub struct AppliedLoad {
+    /// Name of the case it belongs to in the file.
+    pub case: String,
+    /// Factor of the combination; 1 without combinations.
+    pub factor: f64,
+    /// Whether the file says where it acts: a moment alone needs no place.
+    pub placed: bool,
+    /// The factored load about its point of application.
+    pub wrench: Wrench,
+}
+
 /// What has to be carried at one time: a case as given, or a combination of factored cases.
 #[derive(Debug, Clone, PartialEq)]
 pub struct LoadCase {
     /// Name of the case or combination.
     pub name: String,
-    /// Sum of its loads, about the origin.
+    /// Its loads.
+    pub loads: Vec<AppliedLoad>,
+    /// Their sum, about the origin.
     pub wrench: Wrench,
+}
+
+impl LoadCase {
+    /// A case of these loads.
+    #[must_use]
+    pub fn new(name: String, loads: Vec<AppliedLoad>) -> Self {
+        let nothing = Wrench { force: Vector::zeros(), moment: Vector::zeros(), reference: Vector::zeros() };
+        let wrench = loads.iter().fold(nothing, |sum, load| sum.plus(&load.wrench));
+        Self { name, loads, wrench }
+    }
 }
 
 #[cfg(test)]

@@ -8,8 +8,8 @@ use crate::analysis::{
 };
 use crate::diagnostic::{self, Diagnostic, Severity};
 use crate::model::{
-    Basis, Confirmation, DesignFactor, Directional, Discretisation, Document, Filler, FilletSize, Joint, Law,
-    LawForm, LoadCase, RuleSet, Run, Sourced, Vector, Weld, WeldGroup, Wrench,
+    AppliedLoad, Basis, Confirmation, DesignFactor, Directional, Discretisation, Document, Filler,
+    FilletSize, Joint, Law, LawForm, LoadCase, RuleSet, Run, Sourced, Vector, Weld, WeldGroup, Wrench,
 };
 use crate::solvers::{Elastic, ElasticPeak, Motion, NotSolved, Place, Reason, Rupture, State, Ultimate};
 use crate::units::UnitSystem;
@@ -62,14 +62,13 @@ fn weld(name: &str, leg: f64, x: f64) -> Weld {
 }
 
 fn joint() -> Joint {
-    let crane = LoadCase {
-        name: "crane".into(),
-        wrench: Wrench {
-            force: Vector::new(0.0, -60_000.0, 0.0),
-            moment: Vector::new(0.0, 0.0, -12e6),
-            reference: Vector::zeros(),
-        },
+    let wrench = Wrench {
+        force: Vector::new(0.0, -60_000.0, 0.0),
+        moment: Vector::zeros(),
+        reference: Vector::new(200.0, 50.0, 0.0),
     };
+    let load = AppliedLoad { case: "crane".into(), factor: 1.0, placed: true, wrench };
+    let crane = LoadCase::new("crane".into(), vec![load]);
     Joint {
         file: "davit.toml".into(),
         title: "Davit bracket, pier 4".into(),

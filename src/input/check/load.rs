@@ -9,7 +9,7 @@ use super::super::nearest::{listed, suggestion};
 use super::super::schema::{CombinationEntry, File, ForceEntry, LoadEntry, MomentEntry};
 use super::value::Values;
 use super::{geometry, material};
-use crate::model::{LARGEST_FORCE, LARGEST_MOMENT, LoadCase, Vector, Wrench};
+use crate::model::{AppliedLoad, LARGEST_FORCE, LARGEST_MOMENT, LoadCase, Vector, Wrench};
 use crate::units::Dimension;
 use std::f64::consts::FRAC_PI_2;
 
@@ -24,15 +24,18 @@ pub(super) fn cases(
     values: &Values<'_>,
     faults: &mut Faults<'_>,
 ) -> (Vec<LoadCase>, Vec<String>) {
-    let mut cases: Vec<LoadCase> = Vec::new();
+    let mut gathered: Vec<(String, Vec<AppliedLoad>)> = Vec::new();
     for entry in &schema.loads {
         let wrench = wrench(entry, values, faults);
         let (Some(name), Some(wrench)) = (entry.case.value(), wrench) else { continue };
-        match cases.iter_mut().find(|case| case.name == name.value) {
-            Some(case) => case.wrench = case.wrench.plus(&wrench),
-            None => cases.push(LoadCase { name: name.value.clone(), wrench }),
+        let load =
+            AppliedLoad { case: name.value.clone(), factor: 1.0, placed: !entry.at.is_absent(), wrench };
+        match gathered.iter_mut().find(|(case, _)| *case == name.value) {
+            Some((_, loads)) => loads.push(load),
+            None => gathered.push((name.value.clone(), vec![load])),
         }
     }
+    let cases: Vec<LoadCase> = gathered.into_iter().map(|(name, loads)| LoadCase::new(name, loads)).collect();
     if schema.combinations.is_empty() {
         return (cases, Vec::new());
     }
@@ -51,7 +54,7 @@ pub(super) fn cases(
     (combined, unused)
 }
 
-/// The load about the origin.
+/// The load about its point of application.
 fn wrench(entry: &LoadEntry, values: &Values<'_>, faults: &mut Faults<'_>) -> Option<Wrench> {
     let at = match &entry.at {
         Given::Absent => Some(Vector::zeros()),
@@ -69,7 +72,7 @@ fn wrench(entry: &LoadEntry, values: &Values<'_>, faults: &mut Faults<'_>) -> Op
         Given::Value(moment) => self::moment(moment, values, faults),
     };
     match Wrench::new(at?, force?, moment?) {
-        Ok(wrench) => Some(wrench.about(Vector::zeros())),
+        Ok(wrench) => Some(wrench),
         Err(error) => {
             faults.at(&entry.span, error.to_string());
             None
@@ -165,7 +168,7 @@ fn combination(
 ) -> Option<LoadCase> {
     let names = || schema.loads.iter().filter_map(|load| load.case.value()).map(|name| name.value.as_str());
     let all_named = schema.loads.iter().all(|load| load.case.value().is_some());
-    let mut sum = Wrench { force: Vector::zeros(), moment: Vector::zeros(), reference: Vector::zeros() };
+    let mut loads: Vec<AppliedLoad> = Vec::new();
     let mut sound = true;
     for (case, field) in &entry.factors {
         let factor =
@@ -188,12 +191,16 @@ fn combination(
         }
         let found = cases.iter().find(|known| known.name == case.value);
         match (factor, found) {
-            (Some(factor), Some(found)) => sum = sum.plus(&found.wrench.scaled(factor)),
+            (Some(factor), Some(found)) => loads.extend(found.loads.iter().map(|load| AppliedLoad {
+                factor,
+                wrench: load.wrench.scaled(factor),
+                ..load.clone()
+            })),
             _ => sound = false,
         }
     }
     let name = entry.name.value()?.value.clone();
-    sound.then_some(LoadCase { name, wrench: sum })
+    sound.then(|| LoadCase::new(name, loads))
 }
 
 #[cfg(test)]
