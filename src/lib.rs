@@ -33,6 +33,7 @@
 //! | [`solvers`] | elastic vector method; all equilibrium states at first rupture; the path from zero load |
 //! | [`verify`] | checks against a rule set, and which of them decides |
 //! | [`analysis`] | the pipeline from joint to report |
+//! | [`study`] | many joints or loads through the analysis |
 //! | [`output`] | report to text, JSON and CSV |
 //!
 //! # Example
@@ -72,5 +73,6 @@ pub mod model;
 pub mod numerics;
 pub mod output;
 pub mod solvers;
+pub mod study;
 pub mod units;
 pub mod verify;
