@@ -169,6 +169,19 @@ impl Check {
 }
 
 impl Report {
+    /// The case that decides: the one of largest utilisation, or the first that has no answer.
+    #[must_use]
+    pub fn deciding_case(&self) -> Option<&CaseReport> {
+        let unsolved = || self.cases.iter().find(|case| case.status == Status::NotSolved);
+        self.governing.and_then(|index| self.cases.get(index)).or_else(unsolved)
+    }
+
+    /// The case of this name.
+    #[must_use]
+    pub fn case(&self, name: &str) -> Option<&CaseReport> {
+        self.cases.iter().find(|case| case.name == name)
+    }
+
     /// Whether some rule of detailing is broken.
     #[must_use]
     pub fn breached(&self) -> bool {

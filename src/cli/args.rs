@@ -1,5 +1,6 @@
 //! The arguments: commands, options and their help.
 
+use super::figure;
 use clap::{Args, Parser, Subcommand, ValueEnum};
 use std::path::PathBuf;
 
@@ -74,6 +75,13 @@ pub(super) struct CheckArguments {
     /// results on standard output
     #[arg(long, value_name = "FILE")]
     pub(super) elements_csv: Option<PathBuf>,
+    /// Draw the joint: a name that ends in .svg or .png; `-` puts the SVG on standard output in place of the
+    /// results
+    #[arg(long, value_name = "FILE", value_parser = figure::path)]
+    pub(super) figure: Option<PathBuf>,
+    /// Load case or combination to draw instead of the governing one
+    #[arg(long, value_name = "NAME", requires = "figure")]
+    pub(super) case: Option<String>,
     /// Give a parameter of the joint files another value; repeatable
     #[arg(long, value_name = "NAME=VALUE", value_parser = assignment)]
     pub(super) set: Vec<(String, String)>,

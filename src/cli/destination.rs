@@ -35,10 +35,10 @@ impl Destination {
     ///
     /// # Errors
     /// A destination that cannot be written; a reader that closes the pipe is no error.
-    pub(super) fn write(&self, data: &str) -> Result<(), Box<Diagnostic>> {
+    pub(super) fn write(&self, data: impl AsRef<[u8]>) -> Result<(), Box<Diagnostic>> {
         match self {
-            Self::StandardOutput => finished(write_all(io::stdout().lock(), data)),
-            Self::File(path) => write_file(path, data).map_err(|error| unwritable(path, &error)),
+            Self::StandardOutput => finished(write_all(io::stdout().lock(), data.as_ref())),
+            Self::File(path) => write_file(path, data.as_ref()).map_err(|error| unwritable(path, &error)),
         }
     }
 
@@ -48,7 +48,7 @@ impl Destination {
     /// As [`Destination::write`].
     pub(super) fn write_text(&self, text: &str) -> Result<(), Box<Diagnostic>> {
         match self {
-            Self::StandardOutput => finished(write_all(anstream::stdout().lock(), text)),
+            Self::StandardOutput => finished(write_all(anstream::stdout().lock(), text.as_bytes())),
             Self::File(_) => self.write(text),
         }
     }
@@ -62,8 +62,31 @@ impl Destination {
     }
 }
 
-fn write_all(mut stream: impl Write, text: &str) -> io::Result<()> {
-    stream.write_all(text.as_bytes())?;
+/// Refuses to write over a joint file, and to write two results to one place.
+///
+/// # Errors
+/// The first conflict.
+pub(super) fn are_safe(outputs: &[&Option<PathBuf>], inputs: &[PathBuf]) -> Result<(), Box<Diagnostic>> {
+    let named: Vec<&PathBuf> = outputs.iter().filter_map(|path| path.as_ref()).collect();
+    for (index, path) in named.iter().enumerate() {
+        let name = path.display().to_string();
+        let hint = Some("choose another name");
+        let destination = Destination::from(Some(*path));
+        if inputs.iter().any(|file| destination.is_file(file)) {
+            return Err(fault(&name, "the results would replace a joint file", hint));
+        }
+        let is_same = |other: &&PathBuf| {
+            destination.is_file(other) || (path.as_os_str() == "-" && other.as_os_str() == "-")
+        };
+        if named[..index].iter().any(is_same) {
+            return Err(fault(&name, "two results cannot share one destination", hint));
+        }
+    }
+    Ok(())
+}
+
+fn write_all(mut stream: impl Write, data: &[u8]) -> io::Result<()> {
+    stream.write_all(data)?;
     stream.flush()
 }
 
@@ -97,7 +120,7 @@ fn directory_of(path: &Path) -> &Path {
     path.parent().filter(|parent| !parent.as_os_str().is_empty()).unwrap_or(Path::new("."))
 }
 
-fn write_file(path: &Path, data: &str) -> io::Result<()> {
+fn write_file(path: &Path, data: &[u8]) -> io::Result<()> {
     let existing = match fs::metadata(path) {
         Ok(found) => Some(found),
         Err(error) if error.kind() == ErrorKind::NotFound => None,
@@ -113,7 +136,7 @@ fn write_file(path: &Path, data: &str) -> io::Result<()> {
     }
     let target = resolved(path);
     let (mut file, temporary) = Temporary::beside(&target)?;
-    file.write_all(data.as_bytes())?;
+    file.write_all(data)?;
     if let Some(found) = existing {
         file.set_permissions(found.permissions())?;
     }

@@ -15,6 +15,7 @@ mod check;
 mod colour;
 mod destination;
 mod exit;
+mod figure;
 mod message;
 mod rules;
 mod source;

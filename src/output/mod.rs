@@ -11,6 +11,7 @@
 //! Writers compute nothing: they ask the report. Rounding and unit text are in `number.rs` alone.
 
 mod csv;
+mod drawing;
 #[cfg(test)]
 mod fixture;
 mod json;
@@ -20,8 +21,12 @@ mod number;
 mod rules;
 mod table;
 mod text;
+mod words;
 
 pub use csv::{elements_csv, summary_csv};
+pub use drawing::joint_svg;
+#[cfg(feature = "png")]
+pub use drawing::{PngError, png};
 pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
 pub use rules::{law_text, rule_set_text, rules_json, rules_text};

@@ -6,6 +6,7 @@
 //! | machines, utilisation | 12 significant, upward | [`rounded_up`] |
 //! | people | 4 significant, in the file's units | [`people`], [`quantity`], [`point`] |
 //! | people, utilisation | 3 decimals, upward | [`utilisation`] |
+//! | drawings, coordinates | hundredths of a px | [`coordinate`] |
 //!
 //! Upward means that no utilisation above 1 is ever shown as 1. Zero never carries a sign. A missing value is
 //! the caller's business: it stays empty (CSV), null (JSON) or a dash (people), never 0.
@@ -81,7 +82,7 @@ pub(super) fn people(value: f64) -> String {
 }
 
 /// Like [`people`], without the zeros that end a decimal fraction.
-fn trimmed(value: f64) -> String {
+pub(super) fn trimmed(value: f64) -> String {
     let text = people(value);
     if text.contains('.') && !text.contains('e') {
         text.trim_end_matches('0').trim_end_matches('.').to_owned()
@@ -141,6 +142,12 @@ pub(super) fn point(units: UnitSystem, dimension: Dimension, components: &[f64])
     let texts: Vec<String> =
         shown.iter().map(|component| trimmed(units.shown(dimension, *component))).collect();
     format!("({}) {}", texts.join(", "), units.symbol(dimension))
+}
+
+/// A coordinate of a drawing in px: hundredths, without zeros at the end.
+pub(super) fn coordinate(value: f64) -> String {
+    let hundredths = (value * 100.0).round() / 100.0 + 0.0;
+    if hundredths.is_finite() { format!("{hundredths}") } else { "0".to_owned() }
 }
 
 /// An angle in degrees for people.

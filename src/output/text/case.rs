@@ -1,11 +1,11 @@
 //! One case in detail: the load, the two methods side by side, the states found, the checks.
 
-use super::words;
 use crate::analysis::{Analyses, CaseReport, Coefficients, Status, Strength};
 use crate::model::{Basis, Joint, Vector};
 use crate::output::layout::{Emphasis, Layout};
 use crate::output::number::{MISSING, degrees, people, percent, point, quantity, small, utilisation};
 use crate::output::table::{Cell, Side, Table, clip, hanging, labelled};
+use crate::output::words;
 use crate::solvers::{Place, Ultimate};
 use crate::units::{Dimension, UnitSystem};
 

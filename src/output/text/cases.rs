@@ -1,10 +1,10 @@
 //! The table of all cases of a joint, one line each.
 
-use super::words;
 use crate::analysis::Report;
 use crate::output::layout::{Emphasis, Layout};
 use crate::output::number::{MISSING, people};
 use crate::output::table::{Cell, Side, Table};
+use crate::output::words;
 
 /// Every case with its verdict and the nominal load factors of both methods.
 pub(super) fn text(report: &Report, layout: &Layout) -> String {

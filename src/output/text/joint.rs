@@ -1,11 +1,12 @@
 //! One joint: the verdict, the input in brief, the line properties of the welds, its cases, the findings.
 
-use super::{case, cases, words};
-use crate::analysis::{Analyses, Finding, Grade, Report, Section};
+use super::{case, cases};
+use crate::analysis::{Finding, Grade, Report, Section};
 use crate::model::{Confirmation, DesignFactor, Joint, LawForm};
 use crate::output::layout::{Emphasis, Layout};
 use crate::output::number::{length, people, point, power_of_length};
 use crate::output::table::{hanging, labelled, wrap};
+use crate::output::words;
 use crate::units::{Dimension, UnitSystem};
 
 /// The text of one joint.
@@ -14,7 +15,7 @@ pub(super) fn text(report: &Report, layout: &Layout) -> String {
     if report.cases.len() > 1 {
         blocks.push(cases::text(report, layout));
     }
-    let governing = words::governing_case(report);
+    let governing = report.deciding_case();
     for each in &report.cases {
         if layout.all_cases || governing.is_some_and(|case| std::ptr::eq(case, each)) {
             blocks.push(case::text(each, &report.joint, layout));
@@ -32,23 +33,7 @@ fn verdict(report: &Report, layout: &Layout) -> String {
     let title = hanging(&format!("{word:<10}  "), words::title(report), layout.columns());
     // The verdict stands at the start of the block: paint it after the wrapping.
     let title = title.replacen(word, &(layout.paint)(emphasis, word), 1);
-    title + &hanging("            ", &deciding(report), layout.columns())
-}
-
-/// What decides the joint, in words.
-fn deciding(report: &Report) -> String {
-    let Some(case) = words::governing_case(report) else { return "no load case was given".to_owned() };
-    if let Some(failure) = case.not_solved() {
-        return format!("case {}: {}", case.name, failure.reason);
-    }
-    if matches!(case.analyses, Analyses::Unloaded) {
-        return format!("utilisation 0: case {} has no load", case.name);
-    }
-    let basis = case.verification.as_ref().map_or("", |verification| words::basis(verification.basis));
-    let clause = case.governing_check().map_or("", |check| check.clause.as_str());
-    let breach = if report.breached() { "; a rule of detailing is broken, see the findings" } else { "" };
-    let clause = if clause.is_empty() { String::new() } else { format!(" ({clause})") };
-    format!("utilisation {} in case {}, {basis}{clause}{breach}", words::case_utilisation(case), case.name)
+    title + &hanging("            ", &words::deciding(report), layout.columns())
 }
 
 /// File, rules, law and line properties.

@@ -7,11 +7,11 @@ mod case;
 mod cases;
 mod cautions;
 mod joint;
-mod words;
 
 use super::layout::{Emphasis, Layout};
 use super::number::MISSING;
 use super::table::{Cell, Side, Table, clip};
+use super::words;
 use crate::analysis::{Report, Status};
 
 /// The reports of one run as text; `unread` names the files that gave no joint, so that none goes unseen.

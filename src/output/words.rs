@@ -1,4 +1,4 @@
-//! The words of the text for people: verdicts, bases, titles.
+//! The words for people, in texts and drawings: verdicts, bases, titles.
 
 use crate::analysis::{Analyses, CaseReport, Report, Status};
 use crate::model::{Basis, Confirmation, Discretisation, Joint};
@@ -72,12 +72,6 @@ pub(super) fn title(report: &Report) -> &str {
     if report.joint.title.is_empty() { &report.joint.file } else { &report.joint.title }
 }
 
-/// The governing case: the one that decides, or the first that has no answer.
-pub(super) fn governing_case(report: &Report) -> Option<&CaseReport> {
-    let unsolved = || report.cases.iter().find(|case| case.status == Status::NotSolved);
-    report.governing.and_then(|index| report.cases.get(index)).or_else(unsolved)
-}
-
 /// The utilisation of a case: 0 without load, a dash without answer.
 pub(super) fn case_utilisation(case: &CaseReport) -> String {
     match (&case.analyses, &case.verification) {
@@ -92,5 +86,26 @@ pub(super) fn case_utilisation(case: &CaseReport) -> String {
 
 /// The utilisation of the governing case.
 pub(super) fn governing_utilisation(report: &Report) -> String {
-    governing_case(report).map_or_else(|| MISSING.to_owned(), case_utilisation)
+    report.deciding_case().map_or_else(|| MISSING.to_owned(), case_utilisation)
+}
+
+/// What decides the joint, in words.
+pub(super) fn deciding(report: &Report) -> String {
+    let Some(case) = report.deciding_case() else { return "no load case was given".to_owned() };
+    if let Some(failure) = case.not_solved() {
+        return format!("case {}: {}", case.name, failure.reason);
+    }
+    if matches!(case.analyses, Analyses::Unloaded) {
+        return format!("utilisation 0: case {} has no load", case.name);
+    }
+    let by = case.verification.as_ref().map_or("", |verification| basis(verification.basis));
+    let clause = case.governing_check().map_or("", |check| check.clause.as_str());
+    let breach = if report.breached() { "; a rule of detailing is broken, see the findings" } else { "" };
+    let clause = if clause.is_empty() { String::new() } else { format!(" ({clause})") };
+    format!("utilisation {} in case {}, {by}{clause}{breach}", case_utilisation(case), case.name)
+}
+
+/// The law and how the welds are integrated, in brief.
+pub(super) fn law_in_brief(joint: &Joint) -> String {
+    format!("{}, {}", joint.law.id, discretisation(joint))
 }

@@ -1,0 +1,197 @@
+//! The loads where they act, the resultant's line of action, and its distance from the centroid.
+//!
+//! A force hangs at its point of application. A load too far away to be drawn in place stands at the rim, on its
+//! own line of action or in its direction, and its words say where it acts.
+
+use super::super::arrow::Arrow;
+use super::super::canvas::{Area, Canvas, SMALL, Spot, Stroke, Text};
+use super::super::ink::Ink;
+use super::super::space::{Label, Space, clipped};
+use super::super::view::{View, on_page};
+use super::subject::Subject;
+use crate::model::{AppliedLoad, Vector};
+use crate::output::number::{length, point, quantity, trimmed};
+use crate::units::Dimension;
+
+/// Length of the longest and shortest load arrow, px.
+pub(super) const LENGTHS: (f64, f64) = (84.0, 38.0);
+/// Radius of the arrow of a moment, px.
+const TURN: f64 = 22.0;
+
+const LOAD: Arrow = Arrow { ink: Ink::LOAD, width: 3.0, head: 13.0 };
+
+/// Loads that are drawn one by one.
+fn drawn<'r>(subject: &Subject<'r>) -> Vec<&'r AppliedLoad> {
+    if subject.draws_each_load() { subject.applied().loads.iter().collect() } else { Vec::new() }
+}
+
+/// Whether the resultant says more than the loads themselves.
+fn resultant_is_shown(subject: &Subject<'_>) -> bool {
+    let loads = &subject.applied().loads;
+    loads.len() > 1 && subject.case.load.force.norm() > 0.0
+}
+
+/// Draws the loads and takes their place.
+pub(super) fn draw(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view: &View) {
+    line_of_action(canvas, space, subject, view);
+    let loads = drawn(subject);
+    let greatest = loads.iter().map(|load| load.wrench.force.norm()).fold(0.0, f64::max);
+    for load in &loads {
+        let size = load.wrench.force.norm();
+        if size > 0.0 {
+            let length = LENGTHS.1 + (LENGTHS.0 - LENGTHS.1) * size / greatest;
+            force(canvas, space, subject, view, load, length);
+        }
+        if load.wrench.moment.z.abs() > 0.0 {
+            moment(canvas, space, subject, view, load);
+        }
+    }
+    if loads.is_empty() || (resultant_is_shown(subject) && greatest <= 0.0) {
+        resultant(canvas, space, subject, view);
+    }
+}
+
+/// What a load is called: factor and case.
+fn name(load: &AppliedLoad) -> String {
+    #[allow(clippy::float_cmp)] // the factor of a case without combinations is exactly 1
+    if load.factor == 1.0 { load.case.clone() } else { format!("{} × {}", trimmed(load.factor), load.case) }
+}
+
+fn force(
+    canvas: &mut Canvas,
+    space: &mut Space,
+    subject: &Subject<'_>,
+    view: &View,
+    load: &AppliedLoad,
+    length: f64,
+) {
+    let units = subject.joint().units;
+    let unit = on_page(load.wrench.force).normalize();
+    let size = quantity(units, Dimension::Force, load.wrench.force.norm());
+    let at = load.wrench.reference;
+    let near = subject.is_near(at);
+    let tail = if near { view.spot(at) } else { rim(space, view, subject, at, unit * length) };
+    let tip = tail + unit * length;
+    LOAD.draw(canvas, tail, tip);
+    canvas.circle(tail, 3.4, Some(Ink::LOAD), None);
+    space.take_along(tail, tip, 5.0);
+    let mut words = format!("{}: {size}", name(load));
+    if !near {
+        let place = point(units, Dimension::Length, &[at.x, at.y]);
+        words = format!("{words} at {place}");
+    }
+    say(canvas, space, &words, (tail + tip) / 2.0, 6.0, beside(unit));
+}
+
+/// A place at the rim of the drawing for a load that acts far off, in its direction from the group.
+fn rim(space: &Space, view: &View, subject: &Subject<'_>, at: Vector, arrow: Spot) -> Spot {
+    let from = view.spot(subject.centroid());
+    let toward = on_page(at - subject.centroid()).normalize();
+    let frame = space.frame().grown(-30.0);
+    let end = clipped(&frame, from, from + toward * 5000.0).map_or(from, |[_, end]| end);
+    // The whole arrow stays within the frame.
+    let tip = end + arrow;
+    let clamped =
+        Spot::new(tip.x.clamp(frame.least.x, frame.most.x), tip.y.clamp(frame.least.y, frame.most.y));
+    clamped - arrow
+}
+
+fn moment(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view: &View, load: &AppliedLoad) {
+    let units = subject.joint().units;
+    let placed = load.placed && subject.is_near(load.wrench.reference);
+    let at = view.spot(if placed { load.wrench.reference } else { subject.centroid() });
+    LOAD.turn(canvas, at, TURN, load.wrench.moment.z > 0.0);
+    space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
+    let size = quantity(units, Dimension::Moment, load.wrench.moment.z.abs());
+    say(canvas, space, &format!("{}: {size}", name(load)), at, TURN, Spot::new(1.0, -1.0));
+}
+
+/// The sum of all loads, where they are too many to be drawn.
+fn resultant(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view: &View) {
+    let units = subject.joint().units;
+    let load = &subject.case.load;
+    let size = load.force.norm();
+    if size > 0.0 {
+        let at = subject.foot().unwrap_or_else(|| subject.centroid());
+        let near = subject.is_near(at);
+        let unit = on_page(load.force).normalize();
+        let tail = if near { view.spot(at) } else { rim(space, view, subject, at, unit * LENGTHS.0) };
+        LOAD.draw(canvas, tail, tail + unit * LENGTHS.0);
+        space.take_along(tail, tail + unit * LENGTHS.0, 5.0);
+        let words = format!(
+            "{} loads, resultant {}",
+            subject.applied().loads.len(),
+            quantity(units, Dimension::Force, size)
+        );
+        say(canvas, space, &words, tail + unit * (0.5 * LENGTHS.0), 6.0, beside(unit));
+    } else if load.moment.z.abs() > 0.0 {
+        let at = view.spot(subject.centroid());
+        LOAD.turn(canvas, at, TURN, load.moment.z > 0.0);
+        space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
+        say(
+            canvas,
+            space,
+            &quantity(units, Dimension::Moment, load.moment.z.abs()),
+            at,
+            TURN,
+            Spot::new(1.0, -1.0),
+        );
+    }
+}
+
+/// The line of action of the resultant, from its foot to the loads, and the eccentricity.
+fn line_of_action(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view: &View) {
+    let Some(foot) = subject.foot().filter(|foot| subject.is_near(*foot)) else { return };
+    let along = on_page(subject.case.load.force).normalize();
+    let at = view.spot(foot);
+    let frame = space.frame().grown(-10.0);
+    let mut reach = [0.0_f64, 0.0];
+    for near in subject.near_loads() {
+        let distance = (view.spot(near) - at).dot(&along);
+        reach = [reach[0].min(distance), reach[1].max(distance)];
+    }
+    let (from, to) = (at + along * (reach[0] - 24.0), at + along * (reach[1] + 24.0));
+    let Some([from, to]) = clipped(&frame, from, to) else { return };
+    canvas.line(from, to, Stroke::dashed(Ink::LOAD, 1.2, 9.0, 5.0));
+    space.take_line(from, to);
+    if resultant_is_shown(subject) && !drawn(subject).is_empty() {
+        let units = subject.joint().units;
+        let words =
+            format!("resultant {}", quantity(units, Dimension::Force, subject.case.load.force.norm()));
+        let up = if along.y < 0.0 { to } else { from };
+        say(canvas, space, &words, up, 2.0, Spot::new(0.3, -1.0));
+    }
+    let centroid = view.spot(subject.centroid());
+    canvas.line(centroid, at, Stroke::solid(Ink::QUIET, 1.0));
+    space.take_line(centroid, at);
+    // A right angle at the foot.
+    let back = (centroid - at).normalize() * 8.0;
+    let side = along * 8.0;
+    canvas.polyline(&[at + back, at + back + side, at + side], Stroke::solid(Ink::QUIET, 1.0));
+    let words = format!("e = {}", length(subject.joint().units, (foot - subject.centroid()).norm()));
+    let text = Text { size: SMALL, ink: Ink::QUIET, ..Text::new(&words, Spot::zeros()) };
+    let across = Spot::new(-back.y, back.x);
+    let up = if across.y > 0.0 { -across } else { across };
+    let wish = centroid + (at - centroid) * 0.62;
+    if let Some(placed) = space.label(canvas, &Label { text, wish, reach: 1.0, direction: up })
+        && placed.led
+    {
+        super::marks::lead(canvas, wish, &placed.area);
+    }
+}
+
+/// Across an arrow, to the right or above.
+fn beside(unit: Spot) -> Spot {
+    Spot::new(unit.y.abs() + 1e-3, -unit.x.abs())
+}
+
+fn say(canvas: &mut Canvas, space: &mut Space, words: &str, wish: Spot, reach: f64, direction: Spot) {
+    let room = 0.6 * space.frame().size().x;
+    let words = super::super::font::clipped(words, SMALL, room);
+    let text = Text { size: SMALL, ink: Ink::LOAD, ..Text::new(&words, Spot::zeros()) };
+    if let Some(placed) = space.label(canvas, &Label { text, wish, reach, direction })
+        && placed.led
+    {
+        super::marks::lead(canvas, wish, &placed.area);
+    }
+}

@@ -1,0 +1,162 @@
+//! One joint under one case as a drawing: the group to scale, loads, both methods' forces, the verdict.
+//!
+//! | part | file |
+//! |---|---|
+//! | what is drawn, and what lies too far off | `subject.rs` |
+//! | welds as bands, coloured by deformation ratio, with their sizes | `welds.rs` |
+//! | force on every piece of weld by both methods | `forces.rs` |
+//! | loads, line of action, eccentricity | `loads.rs` |
+//! | centroid, centre of rotation, critical points | `marks.rs` |
+//! | measures | `dimensions.rs` |
+//! | numbers, key, remarks | `panel.rs` |
+//!
+//! The drawing is made twice: first to learn how far the arrows reach on the page, then with room for them.
+
+mod dimensions;
+mod forces;
+mod loads;
+mod marks;
+mod panel;
+mod subject;
+mod welds;
+
+use super::canvas::{Area, Canvas, Spot};
+use super::sheet;
+use super::space::Space;
+use super::view::{Need, View};
+use crate::analysis::{CaseReport, Report};
+use crate::output::number::length;
+use crate::output::words;
+use crate::solvers::Ultimate;
+use dimensions::Dimensions;
+use forces::Forces;
+use subject::Subject;
+
+/// Size of the page, px.
+const PAGE: (f64, f64) = (1200.0, 812.0);
+/// Where the group is drawn.
+const FRAME: [f64; 4] = [24.0, 98.0, 838.0, 770.0];
+/// Where the numbers stand.
+const PANEL: [f64; 4] = [852.0, 98.0, 1176.0, 770.0];
+/// Room around the group for labels, px.
+const MARGIN: f64 = 34.0;
+/// Room around loads and centre, px.
+const AROUND: f64 = 62.0;
+
+/// A case of a report as an SVG drawing.
+#[must_use]
+pub fn joint_svg(report: &Report, case: &CaseReport) -> String {
+    let canvas = drawn(report, case);
+    let title = words::title(report);
+    let (verdict, _) = words::verdict(report);
+    let description = format!(
+        "{title}, case {}: {verdict}, {}. Weld group to scale with loads, centre of rotation and the forces of the \
+         ultimate and the elastic method.",
+        case.name,
+        words::deciding(report)
+    );
+    canvas.finish(title, &description)
+}
+
+fn drawn(report: &Report, case: &CaseReport) -> Canvas {
+    let mut canvas = Canvas::new(PAGE.0, PAGE.1);
+    let subject = Subject::new(report, case);
+    let (verdict, emphasis) = words::verdict(report);
+    sheet::head(&mut canvas, Some((verdict, emphasis)), words::title(report), &words::deciding(report));
+    let frame = Area::new(FRAME[0], FRAME[1], FRAME[2], FRAME[3]);
+    let (view, forces, dimensions, group) = laid_out(&subject, &frame);
+    let mut space = Space::new(frame);
+    let mut remarks = Vec::new();
+    welds::draw(&mut canvas, &mut space, &subject, &view);
+    forces::draw(&mut canvas, &mut space, &forces);
+    marks::draw(&mut canvas, &mut space, &subject, &view);
+    dimensions.draw(&mut canvas, &mut space, &subject, &view, &group);
+    loads::draw(&mut canvas, &mut space, &subject, &view);
+    remarks.extend(marks::label(&mut canvas, &mut space, &subject, &view));
+    let missed = welds::label(&mut canvas, &mut space, &subject, &view);
+    remarks.extend(self::remarks(&subject, &view, missed));
+    let panel = Area::new(PANEL[0], PANEL[1], PANEL[2], PANEL[3]);
+    panel::draw(&mut canvas, &panel, &subject, &forces, &remarks);
+    sheet::foot(&mut canvas);
+    canvas
+}
+
+/// The view, the arrows, the rows of measures, and the part of the page that welds and arrows fill.
+fn laid_out(subject: &Subject<'_>, frame: &Area) -> (View, Forces, Dimensions, Area) {
+    let dimensions = Dimensions::of(subject);
+    let (before, after) = dimensions.room();
+    let margin = Spot::new(MARGIN, MARGIN);
+    let around = Spot::new(AROUND, AROUND);
+    let about = subject.centroid();
+    let first = View::fit(&subject.needs(before + margin, after + margin, around), about, frame);
+    let (before_arrows, after_arrows) = overhang(subject, &first, &forces::arrows(subject, &first));
+    let needs: Vec<Need> =
+        subject.needs(before + before_arrows + margin * 0.6, after + after_arrows + margin * 0.6, around);
+    let view = View::fit(&needs, about, frame);
+    let forces = forces::arrows(subject, &view);
+    let (before, after) = overhang(subject, &view, &forces);
+    let (one, other) = (view.spot(subject.least), view.spot(subject.most));
+    let group = Area { least: one.inf(&other) - before, most: one.sup(&other) + after };
+    (view, forces, dimensions, group)
+}
+
+/// How far bands and arrows reach beyond the axes of the welds, px.
+fn overhang(subject: &Subject<'_>, view: &View, forces: &Forces) -> (Spot, Spot) {
+    let (one, other) = (view.spot(subject.least), view.spot(subject.most));
+    let (least, most) = (one.inf(&other), one.sup(&other));
+    let widest = subject.joint().group.welds().iter().map(|weld| welds::band(weld, view)).fold(0.0, f64::max);
+    let half = Spot::new(widest, widest) / 2.0;
+    let (mut before, mut after) = (half, half);
+    for arrow in &forces.arrows {
+        before = before.sup(&(least - arrow.tip));
+        after = after.sup(&(arrow.tip - most));
+    }
+    (before, after)
+}
+
+/// What a reader must know about the drawing and the case.
+fn remarks(subject: &Subject<'_>, view: &View, missed: usize) -> Vec<String> {
+    let joint = subject.joint();
+    let mut remarks = Vec::new();
+    if let Some(reason) = subject.case.not_solved() {
+        remarks.push(format!("Ultimate analysis: {reason}."));
+    }
+    if let Some(ultimate) = subject.case.ultimate() {
+        remarks.extend(about_states(ultimate));
+    }
+    if subject.case.elastic().is_none() {
+        remarks.push("The load is zero: nothing to resist.".to_owned());
+    }
+    if welds::widened(joint, view) {
+        remarks.push("Welds are drawn wider than to scale.".to_owned());
+    }
+    if missed > 0 {
+        let noun = if missed == 1 { "weld has" } else { "welds have" };
+        remarks.push(format!("{missed} {noun} no size at it for want of room: see above."));
+    }
+    let far = subject
+        .applied()
+        .loads
+        .iter()
+        .filter(|load| load.wrench.force.norm() > 0.0 && !subject.is_near(load.wrench.reference));
+    if far.count() > 0 {
+        let distance = length(joint.units, subject.size());
+        remarks.push(format!("A load far from the group ({distance} across) is drawn at the rim."));
+    }
+    remarks
+}
+
+fn about_states(ultimate: &Ultimate) -> Vec<String> {
+    let mut remarks = Vec::new();
+    if ultimate.states.len() > 1 {
+        remarks.push(format!(
+            "{} equilibrium states at first rupture; the smallest is drawn.",
+            ultimate.states.len()
+        ));
+    }
+    if ultimate.incomplete {
+        remarks
+            .push("A smaller state is possible: the search saw signs of one it could not find.".to_owned());
+    }
+    remarks
+}

@@ -1,0 +1,30 @@
+//! Drawings: results to SVG, by one path; a PNG is that SVG rasterised.
+//!
+//! | file | holds |
+//! |---|---|
+//! | `canvas.rs` | a page for lines, areas and texts: SVG |
+//! | `font.rs` | widths of texts, with the embedded font |
+//! | `ink.rs` | colours |
+//! | `space.rs` | where on the page there is room for a text |
+//! | `view.rs` | from the joint's plane to the page |
+//! | `arrow.rs`, `sheet.rs` | arrows; what all pages have in common |
+//! | `joint/` | a joint under a case |
+//! | `png.rs` | SVG to PNG (feature `png`) |
+//!
+//! Coordinates are in px of a page about 1200 px wide. No text overlaps another: what has no room is listed or left out, never
+//! put over something else.
+
+mod arrow;
+mod canvas;
+mod font;
+mod ink;
+mod joint;
+#[cfg(feature = "png")]
+mod png;
+mod sheet;
+mod space;
+mod view;
+
+pub use joint::joint_svg;
+#[cfg(feature = "png")]
+pub use png::{PngError, png};
