@@ -7,13 +7,13 @@
 //!
 //! `v_i = (from (n - 1 - i) + to i) / (n - 1)`, i = 0 .. n - 1; what rounding leaves of a zero is zero.
 
+use super::check::LARGEST_ANGLE;
 use super::dimension::Exponents;
 use super::faults::{Faults, Origin, shortened};
 use super::field::Expression;
 use super::parameters::report_unknown;
 use super::quantity::{Quantity, shown};
 use super::template::{Template, finished};
-use super::{check::LARGEST_ANGLE, faults::Reported};
 use crate::diagnostic::Diagnostic;
 use crate::model::LARGEST_LENGTH;
 use crate::units::Dimension;
@@ -142,7 +142,7 @@ impl Template {
         let asked = Asked { name, target, exponents, unit: &unit, factor };
         let (from, to) = (self.end(&asked, from, origin, faults), self.end(&asked, to, origin, faults));
         let count = self::count(count, origin, faults)?;
-        let values = values(from?, to?, count);
+        let values = values(from?, to?, count, factor);
         if values.windows(2).any(|pair| (pair[1] - pair[0]).abs() <= 0.0) {
             faults.at(origin, "the values do not differ").accepted("two ends that differ");
             return None;
@@ -197,7 +197,7 @@ impl Asked<'_> {
     fn wrong_dimension(&self, text: &str, found: Quantity, origin: &Origin, faults: &mut Faults<'_>) {
         let (wanted, found_name) = (self.exponents.name(), found.exponents.name());
         let message = format!("`{}` is {wanted}, but `{}` is {found_name}", self.name, shortened(text));
-        let reported: Reported<'_> = faults.at(origin, message).accepted(wanted);
+        let reported = faults.at(origin, message).accepted(wanted);
         if found.exponents == Exponents::PURE && text.parse::<f64>().is_ok() {
             reported.hint(format!("give {text} a unit: {text} {}", self.unit));
         }
@@ -223,27 +223,27 @@ fn count(text: &str, origin: &Origin, faults: &mut Faults<'_>) -> Option<usize> 
     read
 }
 
-/// Values at equal distances, both ends exact.
-fn values(from: f64, to: f64, count: usize) -> Vec<f64> {
+/// Values at equal distances in units of `factor`, so that round numbers stay round; both ends exact.
+fn values(from: f64, to: f64, count: usize, factor: f64) -> Vec<f64> {
     let last = count - 1;
     let zero = ROUNDED_ZERO * from.abs().max(to.abs());
+    let (first, end) = (round_number(from / factor), round_number(to / factor));
     let value = |index: usize| {
         #[allow(clippy::cast_precision_loss)] // at most 10 000
         let (before, behind, all) = (index as f64, (last - index) as f64, last as f64);
-        let value = from * (behind / all) + to * (before / all);
+        let value = (first * behind + end * before) / all * factor;
         if value.abs() <= zero { 0.0 } else { value }
     };
-    (0..count)
-        .map(|index| {
-            if index == 0 {
-                from
-            } else if index == last {
-                to
-            } else {
-                value(index)
-            }
-        })
-        .collect()
+    let mut values: Vec<f64> = (1..last).map(value).collect();
+    values.insert(0, from);
+    values.push(to);
+    values
+}
+
+/// What a number of at most six decimals was before rounding touched its last place.
+fn round_number(value: f64) -> f64 {
+    let round = (value * 1e6).round() / 1e6;
+    if (round - value).abs() <= 4.0 * f64::EPSILON * value.abs() { round } else { value }
 }
 
 #[cfg(test)]
@@ -281,7 +281,8 @@ mod tests {
         assert_eq!(found[0].shown(found[0].to()), 90.0);
         assert_eq!(found[1].values, [600.0, 400.0, 200.0, 0.0]);
         assert!(found.iter().all(Variable::is_of_load));
-        assert_eq!(variables(&["load.angle=-30 deg:60 deg:4"]).unwrap()[0].values[1], 0.0);
+        let found = &variables(&["load.angle=-30 deg:60 deg:91"]).unwrap()[0];
+        assert_eq!((found.values[30], found.values[107 - 30]), (0.0, 47.0 * found.factor));
     }
 
     #[test]
