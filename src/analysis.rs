@@ -9,15 +9,15 @@ mod findings;
 mod pipeline;
 
 pub use crate::mechanics::Section;
-pub use crate::verify::{Check, Verification};
+pub use crate::verify::{Check, Demand, Verification};
 pub use comparison::{Coefficients, Strength};
-pub use pipeline::{analyse, analyse_with};
+pub use pipeline::{analyse, analyse_with, governing};
 
 use crate::model::{Joint, Vector, Wrench};
 use crate::solvers::{Elastic, NotSolved, Ultimate};
 
-/// Whether a case holds.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+/// Whether a case holds, from good to bad: the worst of several is their maximum.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
 pub enum Status {
     /// Every verification satisfied.
     Satisfied,

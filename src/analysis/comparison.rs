@@ -9,7 +9,7 @@
 //! The firewall: where the rule set does not accept the ultimate analysis, its design strength and utilisation
 //! do not exist for any writer. Which analysis is accepted is told by [`Joint::accepts`] alone.
 
-use super::{Analyses, CaseReport, Check, Grade, Report, Status};
+use super::{Analyses, CaseReport, Check, Demand, Grade, Report, Status};
 use crate::model::{Basis, Joint, Run, WeldGroup};
 use crate::solvers::{Elastic, NotSolved, Ultimate};
 
@@ -123,7 +123,13 @@ impl CaseReport {
     /// `true` where the load is a moment. `None` when there is no check to take the measure from.
     #[must_use]
     pub fn load_times(&self, factor: f64) -> Option<(f64, bool)> {
-        self.checks.first().map(|check| (check.demand * factor, check.in_moment))
+        self.demand().map(|demand| (demand.size * factor, demand.in_moment))
+    }
+
+    /// Size of the given load in the measure of the checks; `None` when there is no load.
+    #[must_use]
+    pub fn demand(&self) -> Option<Demand> {
+        self.checks.first().map(|check| Demand { size: check.demand, in_moment: check.in_moment })
     }
 
     /// Strength coefficients, where the load has a force and one weld size and filler serve all welds.
@@ -192,13 +198,7 @@ impl Report {
     /// than satisfaction.
     #[must_use]
     pub fn verdict(&self) -> Status {
-        let any = |status: Status| self.cases.iter().any(|case| case.status == status);
-        if any(Status::NotSolved) {
-            Status::NotSolved
-        } else if any(Status::Exceeded) || self.breached() {
-            Status::Exceeded
-        } else {
-            Status::Satisfied
-        }
+        let breach = self.breached().then_some(Status::Exceeded);
+        self.cases.iter().map(|case| case.status).chain(breach).max().unwrap_or(Status::Satisfied)
     }
 }

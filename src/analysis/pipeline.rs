@@ -71,7 +71,8 @@ fn case_report(
 }
 
 /// The case of largest utilisation; `None` when some case has no answer.
-fn governing(cases: &[CaseReport]) -> Option<usize> {
+#[must_use]
+pub fn governing(cases: &[CaseReport]) -> Option<usize> {
     if cases.iter().any(|case| case.status == Status::NotSolved) {
         return None;
     }

@@ -12,7 +12,7 @@
 //!
 //! An angle is kept apart from a pure number, so that `sin(30)` is a fault and `sin(30 deg)` is not.
 
-use crate::units::Dimension;
+use crate::units::{Dimension, UnitSystem};
 
 /// Largest exponent that an intermediate result may have.
 const LARGEST: i32 = 99;
@@ -70,33 +70,67 @@ impl Exponents {
 
     /// What people call it, with its article.
     pub(super) fn name(self) -> String {
-        for dimension in [
-            Dimension::Pure,
-            Dimension::Length,
-            Dimension::Force,
-            Dimension::Moment,
-            Dimension::Stress,
-            Dimension::Angle,
-            Dimension::LineForce,
-        ] {
-            if self == Self::of(dimension) {
-                return name(dimension).to_owned();
-            }
+        if let Some(dimension) = self.dimension() {
+            return name(dimension).to_owned();
         }
         if self == (Self { length: 2, force: 0, angle: 0 }) {
             return "an area".to_owned();
         }
-        let mut text = "a quantity in".to_owned();
-        for (exponent, unit) in [(self.force, "N"), (self.length, "mm"), (self.angle, "rad")] {
+        format!("a quantity in {}", self.product(["N", "mm", "rad"]))
+    }
+
+    /// The dimension with these exponents, if it has a name.
+    pub(super) fn dimension(self) -> Option<Dimension> {
+        DIMENSIONS.into_iter().find(|dimension| self == Self::of(*dimension))
+    }
+
+    /// Symbol of the file's unit, and how many inside units it holds.
+    pub(super) fn unit(self, units: UnitSystem) -> (String, f64) {
+        if let Some(dimension) = self.dimension() {
+            return (units.symbol(dimension).to_owned(), units.factor(dimension));
+        }
+        let basic = [Dimension::Force, Dimension::Length, Dimension::Angle];
+        let [force, length, angle] = basic.map(|dimension| units.factor(dimension));
+        let factor = force.powi(self.force) * length.powi(self.length) * angle.powi(self.angle);
+        (self.product(basic.map(|dimension| units.symbol(dimension))), factor)
+    }
+
+    /// Symbol of the inside unit.
+    pub(super) fn inside_unit(self) -> String {
+        match self.dimension() {
+            Some(Dimension::Stress) => "MPa".to_owned(),
+            Some(Dimension::LineForce) => "N/mm".to_owned(),
+            Some(
+                Dimension::Pure | Dimension::Length | Dimension::Force | Dimension::Moment | Dimension::Angle,
+            )
+            | None => self.product(["N", "mm", "rad"]),
+        }
+    }
+
+    /// A product of units of force, length and angle with these exponents.
+    fn product(self, symbols: [&str; 3]) -> String {
+        let mut factors = Vec::new();
+        for (exponent, symbol) in [self.force, self.length, self.angle].into_iter().zip(symbols) {
             match exponent {
                 0 => {}
-                1 => text.push_str(&format!(" {unit}")),
-                _ => text.push_str(&format!(" {unit}^{exponent}")),
+                1 => factors.push(symbol.to_owned()),
+                _ => factors.push(format!("{symbol}^{exponent}")),
             }
         }
-        text
+        factors.join(" ")
     }
 }
+
+/// The dimensions that have a name.
+const DIMENSIONS: [Dimension; 7] = [
+    Dimension::Pure,
+    Dimension::Length,
+    Dimension::Force,
+    Dimension::Moment,
+    Dimension::Stress,
+    Dimension::Angle,
+    Dimension::LineForce,
+];
 
 /// What people call a dimension, with its article.
 pub(super) fn name(dimension: Dimension) -> &'static str {
@@ -130,6 +164,17 @@ mod tests {
         assert!(Exponents::PURE.times(Exponents::LENGTH, 99).is_some());
         assert!(Exponents::PURE.times(Exponents::LENGTH, 100).is_none());
         assert!(Exponents::PURE.times(Exponents::STRESS, i32::MAX).is_none());
+    }
+
+    #[test]
+    fn units_follow_the_file_and_odd_ones_are_products() {
+        let stress = Exponents::STRESS;
+        assert_eq!((stress.unit(UnitSystem::Us).0.as_str(), stress.inside_unit().as_str()), ("ksi", "MPa"));
+        let area = Exponents::PURE.times(Exponents::LENGTH, 2).unwrap();
+        assert_eq!(area.unit(UnitSystem::Us), ("in^2".to_owned(), 25.4 * 25.4));
+        assert_eq!(area.inside_unit(), "mm^2");
+        assert_eq!(Exponents::of(Dimension::Moment).inside_unit(), "N mm");
+        assert_eq!(Exponents::PURE.inside_unit(), "");
     }
 
     #[test]

@@ -7,6 +7,9 @@
 //! | parameters | `parameters` | `[parameters]`, `--set` | values of the named quantities |
 //! | check | `check` | schema, parameters | [`Joint`] |
 //!
+//! [`Template`] keeps what the first two stages found and repeats the others with other values of parameters;
+//! [`Variable`] is what `--vary` asks for.
+//!
 //! Beside them: `lexer`, `grammar`, `literal`, `expression`, `evaluate`, `quantity`, `dimension` (numbers with
 //! units), `field` and `fields` (values and keys of a table), `faults` (the list), `nearest` (hints), and
 //! [`catalog`] (what the program ships).
@@ -29,10 +32,13 @@ mod nearest;
 mod parameters;
 mod quantity;
 mod schema;
+mod template;
+mod variable;
 
 use crate::diagnostic::Diagnostic;
 use crate::model::Joint;
-use faults::Faults;
+pub use template::Template;
+pub use variable::{MOST_POINTS, Target, Variable};
 
 /// Overrides of a joint file from the command line.
 #[derive(Debug, Clone, Default, PartialEq, Eq)]
@@ -53,23 +59,5 @@ pub struct Options {
 /// # Errors
 /// Every fault of the file and the overrides, at least one, in the order of the file.
 pub fn read_joint(file: &str, text: &str, options: &Options) -> Result<Joint, Vec<Diagnostic>> {
-    let mut faults = Faults::new(file, text);
-    let joint = read(file, text, options, &mut faults);
-    match joint {
-        Some(joint) if faults.is_empty() => Ok(joint),
-        _ => {
-            if faults.is_empty() {
-                faults.whole("the file cannot be read");
-            }
-            Err(faults.finish())
-        }
-    }
-}
-
-fn read(file: &str, text: &str, options: &Options, faults: &mut Faults<'_>) -> Option<Joint> {
-    let document = document::read(text, faults)?;
-    let mut schema = schema::read(&document, faults);
-    parameters::override_with(&mut schema.parameters, &options.set, faults);
-    let parameters = parameters::resolve(&schema.parameters, faults);
-    check::joint(file, &schema, &parameters, options, faults)
+    Template::read(file, text, options).map(Template::into_joint)
 }

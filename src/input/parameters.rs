@@ -5,12 +5,12 @@
 
 use super::document::Table;
 use super::evaluate::{Looked, NoValue, evaluate};
-use super::expression::{is_reserved, names};
+use super::expression::{Action, Step, is_reserved, names};
 use super::faults::{Faults, Origin, Span};
 use super::field::{Content, Expression, Field, field, report};
 use super::lexer::is_name;
 use super::nearest::{listed, suggestion};
-use super::quantity::Quantity;
+use super::quantity::{Quantity, number};
 use std::collections::BTreeMap;
 
 /// A parameter as written.
@@ -36,6 +36,11 @@ impl Parameters {
             Some(None) => Looked::Faulty,
             None => Looked::Unknown,
         }
+    }
+
+    /// The value of a parameter, if there is one.
+    pub(super) fn get(&self, name: &str) -> Option<Quantity> {
+        self.0.get(name).copied().flatten()
     }
 
     /// Their names.
@@ -88,23 +93,55 @@ pub(super) fn override_with(
     faults: &mut Faults<'_>,
 ) {
     for (name, text) in set {
-        let names: Vec<String> = entries.iter().map(|entry| entry.name.clone()).collect();
         let origin = Origin::Option { name: "--set", text: format!("{name}={text}") };
-        let Some(entry) = entries.iter_mut().find(|entry| entry.name == *name) else {
-            let names = names.iter().map(String::as_str);
-            let reported = faults.at(origin, "the file has no parameter of this name");
-            if names.len() == 0 {
-                reported.hint("name it under `[parameters]`");
-            } else {
-                reported.accepted(listed(names.clone())).hint_if(suggestion(name, names));
-            }
-            continue;
-        };
-        entry.field = Expression::read(text, origin.clone(), None, faults).map(|expression| Field {
-            name: format!("parameter `{name}`"),
-            origin,
-            content: Content::Expression(expression),
-        });
+        let Some(entry) = entry(entries, name, &origin, faults) else { continue };
+        let expression = Expression::read(text, origin, None, faults);
+        entry.field = expression.map(|expression| overriding(name, expression));
+    }
+}
+
+/// Replaces one value by a quantity that is known already.
+pub(super) fn give(
+    entries: &mut [ParameterEntry],
+    name: &str,
+    quantity: Quantity,
+    origin: Origin,
+    faults: &mut Faults<'_>,
+) {
+    let Some(entry) = entry(entries, name, &origin, faults) else { return };
+    let text = number(quantity.value);
+    let steps = vec![Step { action: Action::Push(quantity), span: 0..text.len() }];
+    entry.field = Some(overriding(name, Expression { text, steps, origin, inner: None }));
+}
+
+fn overriding(name: &str, expression: Expression) -> Field {
+    let origin = expression.origin.clone();
+    Field { name: format!("parameter `{name}`"), origin, content: Content::Expression(expression) }
+}
+
+/// The entry of this name; a fault when there is none.
+fn entry<'e>(
+    entries: &'e mut [ParameterEntry],
+    name: &str,
+    origin: &Origin,
+    faults: &mut Faults<'_>,
+) -> Option<&'e mut ParameterEntry> {
+    if let Some(at) = entries.iter().position(|entry| entry.name == name) {
+        return entries.get_mut(at);
+    }
+    let names: Vec<&str> = entries.iter().map(|entry| entry.name.as_str()).collect();
+    report_unknown(name, &names, origin, faults);
+    None
+}
+
+/// Reports a name of the command line that is none of those known.
+pub(super) fn report_unknown(name: &str, known: &[&str], origin: &Origin, faults: &mut Faults<'_>) {
+    let names = || known.iter().copied();
+    let reported = faults.at(origin, "the file has no parameter of this name");
+    if known.is_empty() {
+        reported.hint("name it under `[parameters]`");
+    } else {
+        reported.accepted(listed(names())).hint_if(suggestion(name, names()));
     }
 }
 

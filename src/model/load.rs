@@ -12,6 +12,7 @@
 //! | M | `moment` | N mm | moment about `reference` |
 
 use super::{LARGEST_FORCE, LARGEST_LENGTH, LARGEST_MOMENT, ModelError, Vector, within};
+use std::f64::consts::FRAC_PI_2;
 
 /// A force and a moment about a reference point.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -101,9 +102,38 @@ impl LoadCase {
     }
 }
 
+/// The unit vector at an angle (rad) from the x axis, exact at multiples of a right angle.
+#[must_use]
+pub fn direction(angle: f64) -> Vector {
+    let turns = angle / FRAC_PI_2;
+    let whole = turns.round();
+    if (turns - whole).abs() > 1e-14 * whole.abs().max(1.0) {
+        return Vector::new(angle.cos(), angle.sin(), 0.0);
+    }
+    match whole.rem_euclid(4.0) {
+        quarter if quarter < 0.5 => Vector::x(),
+        quarter if quarter < 1.5 => Vector::y(),
+        quarter if quarter < 2.5 => -Vector::x(),
+        _ => -Vector::y(),
+    }
+}
+
 #[cfg(test)]
+#[allow(clippy::float_cmp)] // exact components are meant exactly
 mod tests {
     use super::*;
+
+    #[test]
+    fn right_angles_are_exact() {
+        for (degrees, x, y) in
+            [(0.0, 1.0, 0.0), (90.0, 0.0, 1.0), (-90.0, 0.0, -1.0), (180.0, -1.0, 0.0), (630.0, 0.0, -1.0)]
+        {
+            let found = direction(f64::to_radians(degrees));
+            assert_eq!((found.x, found.y), (x, y), "{degrees}");
+        }
+        let found = direction(f64::to_radians(60.0));
+        assert!((found.x - 0.5).abs() < 1e-15 && (found.norm() - 1.0).abs() < 1e-15);
+    }
 
     #[test]
     fn a_downward_force_to_the_right_turns_clockwise() {

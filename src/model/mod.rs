@@ -15,7 +15,7 @@ pub use joint::{Discretisation, Document, Joint, Plate};
 pub use law::{
     Confirmation, Curve, Directional, Law, LawForm, Limit, PowerOfAngle, RootPolynomial, TableCurve, TableLaw,
 };
-pub use load::{AppliedLoad, LoadCase, Wrench};
+pub use load::{AppliedLoad, LoadCase, Wrench, direction};
 pub use rules::{Basis, ConcentricRule, DesignFactor, RuleSet, Sourced};
 pub use size::FilletSize;
 pub use weld::{Filler, Run, Weld};

@@ -1,1 +1,9 @@
 //! Questions that take many analyses: each is a stream of joints or loads through `analysis`.
+//!
+//! | study | question |
+//! |---|---|
+//! | [`load`] | how a load is turned and shifted |
+//! | [`sweep`] | how the strength follows a parameter of the joint or a property of its load |
+
+pub mod load;
+pub mod sweep;

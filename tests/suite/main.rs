@@ -22,5 +22,6 @@ mod readme;
 mod reference;
 mod shapes;
 mod states;
+mod sweep;
 mod symmetry;
 mod verdicts;

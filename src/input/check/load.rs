@@ -1,7 +1,6 @@
 //! Loads, cases and combinations. Factors apply to loads, never to results.
 //!
-//! A force of size F at the angle a from the x axis is `(F cos a, F sin a)`; multiples of a right angle give
-//! components that are exactly zero.
+//! A force of size F at the angle a from the x axis is `(F cos a, F sin a)`, see [`direction`].
 
 use super::super::faults::{Faults, shortened};
 use super::super::field::Given;
@@ -9,11 +8,13 @@ use super::super::nearest::{listed, suggestion};
 use super::super::schema::{CombinationEntry, File, ForceEntry, LoadEntry, MomentEntry};
 use super::value::Values;
 use super::{geometry, material};
-use crate::model::{AppliedLoad, LARGEST_FORCE, LARGEST_MOMENT, LoadCase, Vector, Wrench};
+use crate::model::{AppliedLoad, LARGEST_FORCE, LARGEST_MOMENT, LoadCase, Vector, Wrench, direction};
 use crate::units::Dimension;
-use std::f64::consts::FRAC_PI_2;
 
 const LOADS_IN_SPACE: &str = "loads in space are not solved yet";
+
+/// Greatest angle of a load accepted, degrees: a hundred turns.
+pub(in crate::input) const LARGEST_ANGLE: f64 = 36_000.0;
 
 /// Greatest load factor accepted in a combination.
 const LARGEST_FACTOR: f64 = 1e4;
@@ -114,26 +115,11 @@ fn force(entry: &ForceEntry, values: &Values<'_>, faults: &mut Faults<'_>) -> Op
                 }
                 Some(length)
             });
-            let angle = angle
-                .value()
-                .and_then(|field| values.between(field, Dimension::Angle, (-36_000.0, 36_000.0), faults));
+            let angle = angle.value().and_then(|field| {
+                values.between(field, Dimension::Angle, (-LARGEST_ANGLE, LARGEST_ANGLE), faults)
+            });
             Some(direction(angle?) * length?)
         }
-    }
-}
-
-/// The unit vector at an angle from the x axis, exact at multiples of a right angle.
-fn direction(angle: f64) -> Vector {
-    let turns = angle / FRAC_PI_2;
-    let whole = turns.round();
-    if (turns - whole).abs() > 1e-14 * whole.abs().max(1.0) {
-        return Vector::new(angle.cos(), angle.sin(), 0.0);
-    }
-    match whole.rem_euclid(4.0) {
-        quarter if quarter < 0.5 => Vector::x(),
-        quarter if quarter < 1.5 => Vector::y(),
-        quarter if quarter < 2.5 => -Vector::x(),
-        _ => -Vector::y(),
     }
 }
 
@@ -201,22 +187,4 @@ fn combination(
     }
     let name = entry.name.value()?.value.clone();
     sound.then(|| LoadCase::new(name, loads))
-}
-
-#[cfg(test)]
-#[allow(clippy::float_cmp)] // exact components are meant exactly
-mod tests {
-    use super::*;
-
-    #[test]
-    fn right_angles_are_exact() {
-        for (degrees, x, y) in
-            [(0.0, 1.0, 0.0), (90.0, 0.0, 1.0), (-90.0, 0.0, -1.0), (180.0, -1.0, 0.0), (630.0, 0.0, -1.0)]
-        {
-            let found = direction(f64::to_radians(degrees));
-            assert_eq!((found.x, found.y), (x, y), "{degrees}");
-        }
-        let found = direction(f64::to_radians(60.0));
-        assert!((found.x - 0.5).abs() < 1e-15 && (found.norm() - 1.0).abs() < 1e-15);
-    }
 }

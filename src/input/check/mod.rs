@@ -10,6 +10,8 @@ mod material;
 mod value;
 mod weld;
 
+pub(super) use load::LARGEST_ANGLE;
+
 use super::Options;
 use super::catalog;
 use super::faults::{Faults, Origin, shortened};
