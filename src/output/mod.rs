@@ -24,9 +24,9 @@ mod text;
 mod words;
 
 pub use csv::{elements_csv, summary_csv};
-pub use drawing::joint_svg;
 #[cfg(feature = "png")]
 pub use drawing::{PngError, png};
+pub use drawing::{joint_svg, sweep_svg};
 pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
 pub use rules::{law_text, rule_set_text, rules_json, rules_text};

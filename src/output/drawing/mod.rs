@@ -9,6 +9,7 @@
 //! | `view.rs` | from the joint's plane to the page |
 //! | `arrow.rs`, `sheet.rs` | arrows; what all pages have in common |
 //! | `joint/` | a joint under a case |
+//! | `chart/` | a sweep: curves and maps |
 //! | `png.rs` | SVG to PNG (feature `png`) |
 //!
 //! Coordinates are in px of a page about 1200 px wide. No text overlaps another: what has no room is listed or left out, never
@@ -16,6 +17,7 @@
 
 mod arrow;
 mod canvas;
+mod chart;
 mod font;
 mod ink;
 mod joint;
@@ -25,6 +27,7 @@ mod sheet;
 mod space;
 mod view;
 
+pub use chart::sweep_svg;
 pub use joint::joint_svg;
 #[cfg(feature = "png")]
 pub use png::{PngError, png};

@@ -1,0 +1,202 @@
+//! Two variables: maps of strength by both methods, their ratio, and the utilisation, with contours.
+//!
+//! A line of contour is where the value, linear between solved points, is the number at it. A step stands where the
+//! strength jumps; where a point has no answer the map is blank.
+
+use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text, outline};
+use super::super::font;
+use super::super::ink::{Ink, as_float, ramp};
+use super::super::sheet;
+use super::super::space::Space;
+use super::field::{Field, Place};
+use super::notes;
+use super::plot::{Plot, range, ticks};
+use crate::output::number::trimmed;
+use crate::study::sweep::{PointCase, Sweep, Variable};
+use std::collections::BTreeSet;
+
+/// Size of the page, px.
+const PAGE: (f64, f64) = (1200.0, 962.0);
+/// Left edges of the maps.
+const LEFT: [f64; 2] = [80.0, 676.0];
+/// Upper edges of the maps.
+const TOP: [f64; 2] = [128.0, 492.0];
+/// Size of a map, px.
+const SIZE: (f64, f64) = (436.0, 296.0);
+/// Most levels of a map.
+const LEVELS: usize = 9;
+/// Utilisation at which a joint ceases to hold.
+const LIMIT: f64 = 1.0;
+
+/// What a map shows.
+struct Map<'s> {
+    title: String,
+    value: &'s dyn Fn(&PointCase) -> Option<f64>,
+    /// Whether it jumps with the ultimate strength.
+    jumps: bool,
+    /// A level of its own, drawn strong.
+    limit: Option<f64>,
+}
+
+/// The page.
+pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
+    let mut canvas = Canvas::new(PAGE.0, PAGE.1);
+    sheet::head(&mut canvas, None, &sweep.joint.title, &notes::subject(sweep));
+    let (dimension, units) = (notes::measure(sweep), sweep.joint.units);
+    let shown =
+        |case: &PointCase, factor: f64| case.load_times(factor).map(|size| units.shown(dimension, size));
+    let unit = units.symbol(dimension);
+    let ultimate = |case: &PointCase| shown(case, case.ultimate?.load_factor);
+    let elastic = |case: &PointCase| shown(case, case.elastic?.load_factor);
+    let ratio = |case: &PointCase| case.ultimate_over_elastic();
+    let utilisation = |case: &PointCase| case.utilisation();
+    let maps = [
+        Map {
+            title: format!("nominal ultimate strength, {unit}"),
+            value: &ultimate,
+            jumps: true,
+            limit: None,
+        },
+        Map {
+            title: format!("nominal elastic strength, {unit}"),
+            value: &elastic,
+            jumps: false,
+            limit: None,
+        },
+        Map { title: "ultimate / elastic".into(), value: &ratio, jumps: true, limit: None },
+        Map { title: "utilisation".into(), value: &utilisation, jumps: true, limit: Some(LIMIT) },
+    ];
+    let torn: BTreeSet<[usize; 2]> = sweep.jumps.iter().map(|jump| jump.points).collect();
+    for (index, map) in maps.iter().enumerate() {
+        let (left, top) = (LEFT[index % 2], TOP[index / 2]);
+        let plot = Plot::new(
+            Area::new(left, top, left + SIZE.0, top + SIZE.1),
+            range(across.values.iter().map(|value| across.shown(*value))),
+            range(up.values.iter().map(|value| up.shown(*value))),
+        );
+        // Titles of the x axis only below the lower maps, those of the y axis only beside the left ones.
+        draw(&mut canvas, sweep, [across, up], &torn, map, &plot);
+    }
+    notes::below(&mut canvas, sweep, Spot::new(sheet::MARGIN, TOP[1] + SIZE.1 + 66.0));
+    sheet::foot(&mut canvas);
+    canvas
+}
+
+fn draw(
+    canvas: &mut Canvas,
+    sweep: &Sweep,
+    [across, up]: [&Variable; 2],
+    torn: &BTreeSet<[usize; 2]>,
+    map: &Map<'_>,
+    plot: &Plot,
+) {
+    // The first variable runs slowest.
+    let index = |column: usize, row: usize| column * up.values.len() + row;
+    let value = |column: usize, row: usize| {
+        sweep.points.get(index(column, row)).and_then(|point| sweep.shown_case(point)).and_then(map.value)
+    };
+    let is_torn =
+        |[a, b]: [usize; 2], [c, d]: [usize; 2]| map.jumps && torn.contains(&[index(a, b), index(c, d)]);
+    let field = Field::new(across.values.len(), up.values.len(), value, is_torn);
+    let spot = |place: Place| {
+        let at = |variable: &Variable, share: f64| {
+            let last = as_float(variable.values.len() - 1);
+            variable.shown(variable.from() + (variable.to() - variable.from()) * share / last)
+        };
+        plot.spot(at(across, place[0]), at(up, place[1]))
+    };
+    let Some(extent) = field.extent() else {
+        plot.axes(canvas, Some(&notes::axis(across)), &map.title);
+        return;
+    };
+    let extent = range(extent.into_iter());
+    let levels: Vec<f64> =
+        ticks(extent, LEVELS).into_iter().filter(|level| *level > extent[0] && *level < extent[1]).collect();
+    let bands = as_float(levels.len()).max(1.0);
+    let mut fill = |level: f64, ink: Ink| {
+        let polygons: Vec<String> = field
+            .above(level)
+            .into_iter()
+            .map(|polygon| outline(&polygon.into_iter().map(spot).collect::<Vec<_>>(), true))
+            .collect();
+        canvas.path(&polygons.concat(), Some(ink), None);
+    };
+    fill(f64::NEG_INFINITY, shade(0.0));
+    for (band, level) in (1..).zip(&levels) {
+        fill(*level, shade(as_float(band) / bands));
+    }
+    contours(canvas, &field, &levels, map.limit, plot, &spot);
+    plot.axes_over(canvas, &notes::axis(across), &notes::axis(up), &map.title);
+    legend(canvas, plot, &levels, extent);
+}
+
+/// The paler part of the ramp, so that lines and numbers show on it.
+fn shade(share: f64) -> Ink {
+    ramp(0.72 * share)
+}
+
+fn contours(
+    canvas: &mut Canvas,
+    field: &Field,
+    levels: &[f64],
+    limit: Option<f64>,
+    plot: &Plot,
+    spot: &dyn Fn(Place) -> Spot,
+) {
+    let mut space = Space::new(plot.area.grown(-4.0));
+    let strong = limit.map(|limit| (limit, Stroke::solid(Ink::EXCEEDED, 2.6), Ink::EXCEEDED));
+    let usual = levels.iter().map(|level| (*level, Stroke::solid(Ink::TEXT, 1.0), Ink::TEXT));
+    let drawn: Vec<(f64, Ink, Vec<[Spot; 2]>)> = usual
+        .chain(strong)
+        .map(|(level, stroke, ink)| {
+            let pieces: Vec<[Spot; 2]> = field.line(level).into_iter().map(|piece| piece.map(spot)).collect();
+            let data: Vec<String> = pieces.iter().map(|piece| outline(piece, false)).collect();
+            if !data.is_empty() {
+                canvas.path(&data.concat(), None, Some(stroke));
+            }
+            (level, ink, pieces)
+        })
+        .collect();
+    for (level, ink, pieces) in drawn.into_iter().rev() {
+        number(canvas, &mut space, level, ink, pieces);
+    }
+}
+
+/// The number of a contour, where there is room on it: as near the middle of the map as can be.
+fn number(canvas: &mut Canvas, space: &mut Space, level: f64, ink: Ink, mut pieces: Vec<[Spot; 2]>) {
+    let words = trimmed(level);
+    let middle = space.frame().middle();
+    let distance = |piece: &[Spot; 2]| ((piece[0] + piece[1]) / 2.0 - middle).norm();
+    pieces.sort_by(|a, b| distance(a).total_cmp(&distance(b)));
+    for [from, to] in pieces {
+        let at = (from + to) / 2.0 + Spot::new(0.0, 0.5 * font::CAPITALS * SMALL);
+        let text = Text { size: SMALL, ink, anchor: Anchor::Middle, halo: true, ..Text::new(&words, at) };
+        if space.is_free(&text.area()) {
+            space.take(text.area());
+            canvas.text(&text);
+            return;
+        }
+    }
+}
+
+/// The shades with the levels between them.
+fn legend(canvas: &mut Canvas, plot: &Plot, levels: &[f64], extent: [f64; 2]) {
+    let (left, right) = (plot.area.most.x + 14.0, plot.area.most.x + 30.0);
+    let (bottom, height) = (plot.area.most.y, plot.area.size().y);
+    let bands = levels.len() + 1;
+    let each = height / as_float(bands);
+    for band in 0..bands {
+        let lower = bottom - each * as_float(band);
+        let ink = shade(as_float(band) / as_float(levels.len()).max(1.0));
+        canvas.area(&Area::new(left, lower - each - 0.3, right, lower), Some(ink), None);
+    }
+    canvas.area(&Area::new(left, bottom - height, right, bottom), None, Some(Stroke::solid(Ink::QUIET, 1.0)));
+    let numbers = [extent[0]].into_iter().chain(levels.iter().copied()).chain([extent[1]]);
+    for (index, value) in numbers.enumerate() {
+        let words = crate::output::number::people(value);
+        let words = if index == 0 || index == bands { words } else { trimmed(value) };
+        let at = Spot::new(right + 6.0, bottom - each * as_float(index) + 0.5 * font::CAPITALS * SMALL);
+        let ink = if index == 0 || index == bands { Ink::QUIET } else { Ink::TEXT };
+        canvas.text(&Text { size: SMALL, ink, ..Text::new(&words, at) });
+    }
+}

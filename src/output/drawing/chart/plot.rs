@@ -1,0 +1,227 @@
+//! One plot: a frame, ticks, a grid, and curves that plotters draws into it.
+
+use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text};
+use super::super::font;
+use super::super::ink::Ink;
+use super::pen::{Pen, fine};
+use crate::output::number::trimmed;
+use plotters::chart::ChartBuilder;
+use plotters::coord::ranged1d::{BoldPoints, Ranged};
+use plotters::coord::types::RangedCoordf64;
+use plotters::drawing::IntoDrawingArea;
+use plotters::series::LineSeries;
+use plotters::style::{Color, RGBColor};
+
+/// Why plotters cannot fail here.
+const PROOF: &str = "the page takes every line, and the part of it that a plot has is not shared";
+
+/// Most ticks along an axis.
+const MOST_TICKS: usize = 9;
+
+/// A plot on a page.
+#[derive(Debug, Clone)]
+pub(super) struct Plot {
+    /// Where it stands.
+    pub(super) area: Area,
+    x: [f64; 2],
+    y: [f64; 2],
+}
+
+/// How points are marked.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub(super) enum Mark {
+    /// A filled circle.
+    Dot,
+    /// An open circle.
+    Ring,
+    /// A filled square.
+    Square,
+}
+
+impl Mark {
+    /// Draws the mark.
+    pub(super) fn draw(self, canvas: &mut Canvas, at: Spot, ink: Ink) {
+        match self {
+            Self::Dot => canvas.circle(at, 3.2, Some(ink), None),
+            Self::Ring => canvas.circle(at, 3.4, Some(Ink::PAPER), Some(Stroke::solid(ink, 1.6))),
+            Self::Square => canvas.area(&Area::around(at, Spot::new(6.0, 6.0)), Some(ink), None),
+        }
+    }
+}
+
+/// A range that is not empty.
+pub(super) fn range(values: impl Iterator<Item = f64>) -> [f64; 2] {
+    let (mut least, mut most) = (f64::INFINITY, f64::NEG_INFINITY);
+    for value in values {
+        (least, most) = (least.min(value), most.max(value));
+    }
+    if !(least.is_finite() && most.is_finite()) {
+        return [0.0, 1.0];
+    }
+    let middle = 0.5 * (least + most);
+    let least_width = 1e-6 * middle.abs().max(1e-9);
+    if most - least < least_width { [middle - least_width, middle + least_width] } else { [least, most] }
+}
+
+/// Round numbers within a range, at most so many.
+pub(super) fn ticks(range: [f64; 2], most: usize) -> Vec<f64> {
+    let axis: RangedCoordf64 = (range[0]..range[1]).into();
+    axis.key_points(BoldPoints(most))
+}
+
+impl Plot {
+    pub(super) fn new(area: Area, x: [f64; 2], y: [f64; 2]) -> Self {
+        Self { area, x, y }
+    }
+
+    /// Where a point of the plot is on the page.
+    pub(super) fn spot(&self, x: f64, y: f64) -> Spot {
+        let share = |value: f64, [least, most]: [f64; 2]| (value - least) / (most - least);
+        let size = self.area.size();
+        let (x, y) = (share(x, self.x), share(y, self.y));
+        Spot::new(self.area.least.x + x * size.x, self.area.most.y - y * size.y)
+    }
+
+    /// Draws the grid, the numbers and the titles; the numbers of the x axis only with a title below.
+    pub(super) fn axes(&self, canvas: &mut Canvas, x_title: Option<&str>, y_title: &str) {
+        let grid = Stroke::solid(Ink::HAIR, 0.8);
+        for value in self.x_ticks() {
+            let at = self.spot(value, self.y[0]);
+            canvas.line(at, Spot::new(at.x, self.area.least.y), grid);
+            if x_title.is_some() {
+                number(canvas, value, at + Spot::new(0.0, 6.0 + font::ASCENT * SMALL), Anchor::Middle);
+            }
+        }
+        for value in self.y_ticks() {
+            let at = self.spot(self.x[0], value);
+            canvas.line(at, Spot::new(self.area.most.x, at.y), grid);
+            number(canvas, value, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
+        }
+        self.frame(canvas);
+        self.titles(canvas, x_title, y_title);
+    }
+
+    /// Draws numbers, titles and frame on a map that fills the plot; the title of the y axis stands upright beside it.
+    pub(super) fn axes_over(&self, canvas: &mut Canvas, x_title: &str, y_title: &str, title: &str) {
+        let tick = Stroke::solid(Ink::QUIET, 1.0);
+        for value in self.x_ticks() {
+            let at = self.spot(value, self.y[0]);
+            canvas.line(at, at + Spot::new(0.0, 4.0), tick);
+            number(canvas, value, at + Spot::new(0.0, 6.0 + font::ASCENT * SMALL), Anchor::Middle);
+        }
+        for value in self.y_ticks() {
+            let at = self.spot(self.x[0], value);
+            canvas.line(at, at - Spot::new(4.0, 0.0), tick);
+            number(canvas, value, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
+        }
+        self.frame(canvas);
+        self.titles(canvas, Some(x_title), title);
+        let y_title = font::clipped(y_title, SMALL, self.area.size().y);
+        let at = Spot::new(self.area.least.x - 52.0, self.area.middle().y);
+        canvas.text(&Text { size: SMALL, anchor: Anchor::Middle, upward: true, ..Text::new(&y_title, at) });
+    }
+
+    /// Draws the outline.
+    pub(super) fn frame(&self, canvas: &mut Canvas) {
+        canvas.area(&self.area, None, Some(Stroke::solid(Ink::QUIET, 1.0)));
+    }
+
+    fn titles(&self, canvas: &mut Canvas, x_title: Option<&str>, y_title: &str) {
+        let above = Spot::new(self.area.least.x, self.area.least.y - 9.0);
+        let room = self.area.size().x;
+        let y_title = font::clipped(y_title, SMALL, room);
+        canvas.text(&Text { size: SMALL, ..Text::new(&y_title, above) });
+        if let Some(title) = x_title {
+            let title = font::clipped(title, SMALL, room);
+            let below = Spot::new(self.area.middle().x, self.area.most.y + 10.0 + 2.35 * SMALL);
+            canvas.text(&Text { size: SMALL, anchor: Anchor::Middle, ..Text::new(&title, below) });
+        }
+    }
+
+    /// Ticks whose numbers stand clear of each other.
+    fn x_ticks(&self) -> Vec<f64> {
+        let mut most = MOST_TICKS;
+        loop {
+            let found = ticks(self.x, most);
+            let widest = found.iter().map(|value| font::width(&trimmed(*value), SMALL)).fold(0.0, f64::max);
+            let apart = match found.as_slice() {
+                [first, second, ..] => (self.spot(*second, 0.0) - self.spot(*first, 0.0)).x.abs(),
+                _ => f64::INFINITY,
+            };
+            if widest + 12.0 <= apart || most <= 2 {
+                return found;
+            }
+            most -= 1;
+        }
+    }
+
+    fn y_ticks(&self) -> Vec<f64> {
+        let room = self.area.size().y / (1.9 * SMALL);
+        let mut most = MOST_TICKS;
+        while super::super::ink::as_float(most) > room && most > 2 {
+            most -= 1;
+        }
+        ticks(self.y, most)
+    }
+
+    /// Draws a curve through points.
+    pub(super) fn curve(&self, canvas: &mut Canvas, points: &[[f64; 2]], ink: Ink, width: f64) {
+        let root = Pen::new(canvas, self.area).into_drawing_area();
+        let mut chart = ChartBuilder::on(&root)
+            .build_cartesian_2d(self.x[0]..self.x[1], self.y[0]..self.y[1])
+            .expect(PROOF);
+        let [r, g, b] = ink.0;
+        let style = RGBColor(r, g, b).stroke_width(fine(width));
+        let places = points.iter().map(|[x, y]| (*x, *y));
+        chart.draw_series(LineSeries::new(places, style)).expect(PROOF);
+    }
+
+    /// Marks points.
+    pub(super) fn marks(&self, canvas: &mut Canvas, points: &[[f64; 2]], mark: Mark, ink: Ink) {
+        for [x, y] in points {
+            mark.draw(canvas, self.spot(*x, *y), ink);
+        }
+    }
+}
+
+/// A number at a tick.
+fn number(canvas: &mut Canvas, value: f64, at: Spot, anchor: Anchor) {
+    canvas.text(&Text { size: SMALL, ink: Ink::QUIET, anchor, ..Text::new(&trimmed(value), at) });
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn a_curve_goes_through_its_points() {
+        let mut canvas = Canvas::new(200.0, 200.0);
+        let plot = Plot::new(Area::new(20.0, 20.0, 180.0, 120.0), [0.0, 10.0], [0.0, 5.0]);
+        plot.curve(&mut canvas, &[[0.0, 0.0], [5.0, 2.5], [10.0, 5.0]], Ink::ULTIMATE, 2.0);
+        let drawing = canvas.finish("", "");
+        let data = drawing.split("<path d=\"M").nth(1).and_then(|rest| rest.split('"').next()).unwrap();
+        let numbers: Vec<f64> = data.split([' ', 'L']).map(|number| number.parse().unwrap()).collect();
+        for (found, expected) in numbers.iter().zip([20.0, 120.0, 100.0, 70.0, 180.0, 20.0]) {
+            // One px of plotters.
+            assert!((found - expected).abs() <= 0.13, "{data}");
+        }
+        assert!((plot.spot(5.0, 2.5) - Spot::new(100.0, 70.0)).norm() < 1e-12);
+        assert!(drawing.contains("stroke=\"#163f73\" stroke-width=\"2\""), "{drawing}");
+    }
+
+    #[test]
+    fn ticks_are_round_numbers_within_the_range() {
+        for range in [[0.0, 1.0], [-37.0, 1200.0], [0.000_31, 0.000_34], [1e9, 1.7e9]] {
+            let found = ticks(range, 8);
+            assert!((2..=8).contains(&found.len()), "{range:?}: {found:?}");
+            assert!(found.iter().all(|tick| *tick >= range[0] && *tick <= range[1]));
+        }
+    }
+
+    #[test]
+    fn an_empty_range_is_widened() {
+        let [least, most] = range([3.0, 3.0].into_iter());
+        assert!(least < 3.0 && most > 3.0);
+        assert_eq!(range(std::iter::empty()), [0.0, 1.0]);
+    }
+}
