@@ -5,6 +5,7 @@
 //!        -> check_json     schema weldpole.check/1                       json/
 //!        -> elements_csv   one row per element of weld                   csv/elements.rs
 //!        -> summary_csv    one row per case                              csv/summary.rs
+//! Sweep  -> sweep_text, sweep_csv, sweep_json                                 sweep/
 //! RuleSet, Law -> rules_text, rules_json                                 rules.rs
 //! ```
 //!
@@ -18,6 +19,7 @@ mod layout;
 mod names;
 mod number;
 mod rules;
+mod sweep;
 mod table;
 mod text;
 
@@ -25,4 +27,5 @@ pub use csv::{elements_csv, summary_csv};
 pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
 pub use rules::{law_text, rule_set_text, rules_json, rules_text};
+pub use sweep::{sweep_csv, sweep_json, sweep_text};
 pub use text::check_text;

@@ -5,9 +5,9 @@
 
 mod case;
 mod cases;
-mod cautions;
-mod joint;
-mod words;
+pub(super) mod cautions;
+pub(super) mod joint;
+pub(super) mod words;
 
 use super::layout::{Emphasis, Layout};
 use super::number::MISSING;
