@@ -5,9 +5,10 @@ use super::destination::Destination;
 use super::exit::Exit;
 use super::source::{Source, fault};
 use super::{VERSION, colour, message};
+use std::path::PathBuf;
 use weldpole::analysis::{Report, analyse};
 use weldpole::diagnostic::Diagnostic;
-use weldpole::input::{Options, read_joint};
+use weldpole::input::read_joint;
 use weldpole::output::{check_json, check_text, elements_csv, summary_csv};
 
 /// Verifies every joint, also those after a bad one, and writes the results.
@@ -43,14 +44,22 @@ fn sources(arguments: &CheckArguments) -> Vec<Source> {
     }
 }
 
+/// Refuses to write over a joint file.
+pub(super) fn refuse_replacing(results: Option<&PathBuf>, files: &[PathBuf]) -> Result<(), Box<Diagnostic>> {
+    let destination = Destination::from(results);
+    match results {
+        Some(path) if files.iter().any(|file| destination.is_file(file)) => {
+            let message = "the results would replace a joint file";
+            Err(fault(&path.display().to_string(), message, Some("choose another name")))
+        }
+        Some(_) | None => Ok(()),
+    }
+}
+
 /// Refuses to write over a joint file or over another result, and to read standard input twice.
 fn destinations_are_safe(arguments: &CheckArguments) -> Result<(), Box<Diagnostic>> {
-    for path in [&arguments.output, &arguments.elements_csv].into_iter().flatten() {
-        let destination = Destination::from(Some(path));
-        if arguments.files.iter().any(|file| destination.is_file(file)) {
-            let message = "the results would replace a joint file";
-            return Err(fault(&path.display().to_string(), message, Some("choose another name")));
-        }
+    for path in [&arguments.output, &arguments.elements_csv] {
+        refuse_replacing(path.as_ref(), &arguments.files)?;
     }
     if let (Some(results), Some(elements)) = (&arguments.output, &arguments.elements_csv)
         && (Destination::from(Some(results)).is_file(elements)
@@ -76,12 +85,7 @@ struct Outcomes {
 }
 
 fn outcomes(arguments: &CheckArguments, columns: usize) -> Outcomes {
-    let options = Options {
-        set: arguments.set.clone(),
-        elements: arguments.elements,
-        law: arguments.law.clone(),
-        rules: arguments.rules.clone(),
-    };
+    let options = arguments.overrides.options();
     let mut outcomes = Outcomes::default();
     for source in sources(arguments) {
         let (text, outcome) = match source.read() {
