@@ -8,7 +8,7 @@ use super::{VERSION, colour, figure, message};
 use std::path::PathBuf;
 use weldpole::analysis::{Report, analyse};
 use weldpole::diagnostic::Diagnostic;
-use weldpole::input::{Options, read_joint};
+use weldpole::input::read_joint;
 use weldpole::output::{check_json, check_text, elements_csv, joint_svg, summary_csv};
 
 /// Verifies every joint, also those after a bad one, and writes the results.
@@ -72,12 +72,7 @@ struct Outcomes {
 }
 
 fn outcomes(arguments: &CheckArguments, columns: usize) -> Outcomes {
-    let options = Options {
-        set: arguments.set.clone(),
-        elements: arguments.elements,
-        law: arguments.law.clone(),
-        rules: arguments.rules.clone(),
-    };
+    let options = arguments.overrides.options();
     let mut outcomes = Outcomes::default();
     for source in sources(arguments) {
         let (text, outcome) = match source.read() {

@@ -1,10 +1,11 @@
 //! The command line: reads files, asks the library, writes what comes back, and sets the exit status.
 //!
 //! ```text
-//! args.rs -> check.rs | rules.rs | starter.rs      one file per command
+//! args.rs -> check.rs | sweep.rs | rules.rs | starter.rs    one file per command
 //!            source.rs       where text is read from
 //!            destination.rs  where results are written, whole or not at all
-//!            message.rs      everything that goes to standard error
+//!            message.rs      everything that goes to standard error, but
+//!            progress.rs     how far a long run is
 //! ```
 //!
 //! Only this part of the program touches files, the environment and the terminal; it sees the library from
@@ -17,9 +18,11 @@ mod destination;
 mod exit;
 mod figure;
 mod message;
+mod progress;
 mod rules;
 mod source;
 mod starter;
+mod sweep;
 
 use args::{Arguments, Command};
 use clap::Parser;
@@ -42,6 +45,7 @@ pub(crate) fn run(arguments: impl Iterator<Item = OsString>) -> ExitCode {
     };
     match arguments.command {
         Command::Check(arguments) => check::run(&arguments),
+        Command::Sweep(arguments) => sweep::run(&arguments),
         Command::Rules(arguments) => rules::run(&arguments),
         Command::New(arguments) => starter::run(&arguments),
     }

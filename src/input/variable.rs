@@ -57,6 +57,9 @@ pub struct Variable {
     pub factor: f64,
     /// Symbol of the inside unit.
     pub inside_unit: String,
+    /// The parameter's value in the file, inside units; `None` for a property of the load, which each case has
+    /// its own of.
+    pub given: Option<f64>,
     /// Its values in the inside units (N, mm, rad and their products), at least two.
     pub values: Vec<f64>,
 }
@@ -147,8 +150,12 @@ impl Template {
             faults.at(origin, "the values do not differ").accepted("two ends that differ");
             return None;
         }
+        let given = match target {
+            Target::Parameter => self.parameter(name).map(|own| own.value),
+            Target::LoadEccentricity | Target::LoadAngle => None,
+        };
         let (name, inside_unit) = (name.to_owned(), exponents.inside_unit());
-        Some(Variable { name, target, unit, factor, inside_unit, values })
+        Some(Variable { name, target, unit, factor, inside_unit, given, values })
     }
 
     /// One end of a range, in the inside units.
@@ -272,6 +279,7 @@ mod tests {
         let found = variables(&["arm = 5cm : depth + 60 mm : 6"]).unwrap();
         assert_eq!(found[0].values, [50.0, 100.0, 150.0, 200.0, 250.0, 300.0]);
         assert_eq!((found[0].unit.as_str(), found[0].target), ("mm", Target::Parameter));
+        assert_eq!(found[0].given, Some(290.0));
     }
 
     #[test]

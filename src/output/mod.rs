@@ -5,6 +5,7 @@
 //!        -> check_json     schema weldpole.check/1                       json/
 //!        -> elements_csv   one row per element of weld                   csv/elements.rs
 //!        -> summary_csv    one row per case                              csv/summary.rs
+//! Sweep  -> sweep_text, sweep_csv, sweep_json                                 sweep/
 //! RuleSet, Law -> rules_text, rules_json                                 rules.rs
 //! ```
 //!
@@ -19,6 +20,7 @@ mod layout;
 mod names;
 mod number;
 mod rules;
+mod sweep;
 mod table;
 mod text;
 mod words;
@@ -30,4 +32,5 @@ pub use drawing::{joint_svg, sweep_svg};
 pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
 pub use rules::{law_text, rule_set_text, rules_json, rules_text};
+pub use sweep::{sweep_csv, sweep_json, sweep_text};
 pub use text::check_text;

@@ -150,6 +150,21 @@ pub(super) fn coordinate(value: f64) -> String {
     if hundredths.is_finite() { format!("{hundredths}") } else { "0".to_owned() }
 }
 
+/// Values of a variable for people: as many decimals as tell values a `step` apart to three figures, without
+/// the zeros that all of them end with.
+pub(super) fn graded(values: &[f64], step: f64) -> Vec<String> {
+    let step = step.abs();
+    #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)] // clamped
+    let decimals = if step > 0.0 { (2.0 - step.log10().floor()).clamp(0.0, 15.0) as usize } else { 0 };
+    // Adding zero turns a rounded -0 into 0.
+    let rounded =
+        |value: &f64| format!("{value:.decimals$}").parse::<f64>().map_or(*value, |value| value + 0.0);
+    let texts: Vec<String> = values.iter().map(|value| format!("{:.decimals$}", rounded(value))).collect();
+    let zeros = |text: &String| text.len() - text.trim_end_matches('0').len();
+    let cut = if decimals == 0 { 0 } else { texts.iter().map(zeros).min().unwrap_or(0).min(decimals) };
+    texts.iter().map(|text| text[..text.len() - cut].trim_end_matches('.').to_owned()).collect()
+}
+
 /// An angle in degrees for people.
 pub(super) fn degrees(angle: f64) -> String {
     format!("{:.1} deg", angle.to_degrees())
@@ -217,6 +232,14 @@ mod tests {
         assert_eq!(quantity(UnitSystem::Us, Dimension::Length, 25.4), "1.000 in");
         assert_eq!(length(UnitSystem::Us, 12.7), "0.5 in");
         assert_eq!(power_of_length(UnitSystem::Metric, 4).1, "mm4");
+    }
+
+    #[test]
+    fn values_of_a_variable_show_their_step() {
+        assert_eq!(graded(&[150.0, 200.0, -0.0], 50.0), ["150", "200", "0"]);
+        assert_eq!(graded(&[1000.0, 1000.25, 1000.5], 0.25), ["1000.00", "1000.25", "1000.50"]);
+        assert_eq!(graded(&[0.0, 100.0 / 3.0], 100.0 / 3.0), ["0.0", "33.3"]);
+        assert_eq!(graded(&[-1e-17, 2.4287166], 0.1), ["0.000", "2.429"]);
     }
 
     #[test]

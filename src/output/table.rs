@@ -77,6 +77,13 @@ pub(super) fn labelled(indent: usize, rows: &[(&str, String)], columns: usize) -
         .collect()
 }
 
+/// A text across all columns, cut to the width.
+fn across(text: &Cell, indent: usize, layout: &Layout) -> String {
+    let shown = clip(&text.text, layout.columns().saturating_sub(indent));
+    let painted = text.emphasis.map_or_else(|| shown.clone(), |emphasis| (layout.paint)(emphasis, &shown));
+    format!("{}{painted}\n", " ".repeat(indent))
+}
+
 /// Side on which a column's text stands.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub(super) enum Side {
@@ -112,7 +119,15 @@ impl<T: AsRef<str>> From<T> for Cell {
 #[derive(Debug, Clone)]
 pub(super) struct Table {
     columns: Vec<(String, Side)>,
-    rows: Vec<Vec<Cell>>,
+    rows: Vec<Row>,
+}
+
+/// One row of a table.
+#[derive(Debug, Clone)]
+enum Row {
+    Cells(Vec<Cell>),
+    /// Text across all columns.
+    Across(Cell),
 }
 
 impl Table {
@@ -124,7 +139,12 @@ impl Table {
 
     /// Adds a row.
     pub(super) fn row(&mut self, cells: Vec<Cell>) {
-        self.rows.push(cells);
+        self.rows.push(Row::Cells(cells));
+    }
+
+    /// Adds a text across all columns.
+    pub(super) fn across(&mut self, text: Cell) {
+        self.rows.push(Row::Across(text));
     }
 
     /// The table as text, its title line only when a column has a title.
@@ -136,7 +156,10 @@ impl Table {
             block.push_str(&self.lines(&titles, &widths, indent, layout));
         }
         for row in &self.rows {
-            block.push_str(&self.lines(row, &widths, indent, layout));
+            match row {
+                Row::Cells(cells) => block.push_str(&self.lines(cells, &widths, indent, layout)),
+                Row::Across(text) => block.push_str(&across(text, indent, layout)),
+            }
         }
         block
     }
@@ -144,7 +167,10 @@ impl Table {
     /// Natural widths, the flexible columns narrowed as far as the table is too wide.
     fn widths(&self, available: usize) -> Vec<usize> {
         let natural = |index: usize| {
-            let cells = self.rows.iter().filter_map(|row| row.get(index)).map(|cell| width(&cell.text));
+            let cells = self.rows.iter().filter_map(|row| match row {
+                Row::Cells(cells) => cells.get(index).map(|cell| width(&cell.text)),
+                Row::Across(_) => None,
+            });
             cells.chain([width(&self.columns[index].0)]).max().unwrap_or(0)
         };
         let mut widths: Vec<usize> = (0..self.columns.len()).map(natural).collect();

@@ -3,7 +3,7 @@
 use crate::analysis::{Analyses, CaseReport, Report, Status};
 use crate::model::{Basis, Confirmation, Discretisation, Joint};
 use crate::output::layout::Emphasis;
-use crate::output::number::{MISSING, utilisation};
+use crate::output::number::{MISSING, percent, utilisation};
 
 /// The verdict on a joint in capitals.
 pub(super) fn verdict(report: &Report) -> (&'static str, Emphasis) {
@@ -16,7 +16,7 @@ pub(super) fn verdict(report: &Report) -> (&'static str, Emphasis) {
     }
 }
 
-fn status_in_capitals(status: Status) -> &'static str {
+pub(in crate::output) fn status_in_capitals(status: Status) -> &'static str {
     match status {
         Status::Satisfied => "SATISFIED",
         Status::Exceeded => "EXCEEDED",
@@ -25,7 +25,7 @@ fn status_in_capitals(status: Status) -> &'static str {
 }
 
 /// A status in a table.
-pub(super) fn status(status: Status) -> &'static str {
+pub(in crate::output) fn status(status: Status) -> &'static str {
     match status {
         Status::Satisfied => "satisfied",
         Status::Exceeded => "exceeded",
@@ -34,7 +34,7 @@ pub(super) fn status(status: Status) -> &'static str {
 }
 
 /// How a status is emphasised.
-pub(super) fn status_emphasis(status: Status) -> Emphasis {
+pub(in crate::output) fn status_emphasis(status: Status) -> Emphasis {
     match status {
         Status::Satisfied => Emphasis::Satisfied,
         Status::Exceeded => Emphasis::Exceeded,
@@ -43,7 +43,7 @@ pub(super) fn status_emphasis(status: Status) -> Emphasis {
 }
 
 /// The name of an analysis.
-pub(super) fn basis(basis: Basis) -> &'static str {
+pub(in crate::output) fn basis(basis: Basis) -> &'static str {
     match basis {
         Basis::Ultimate => "instantaneous centre",
         Basis::Elastic => "elastic vector",
@@ -67,9 +67,14 @@ pub(super) fn discretisation(joint: &Joint) -> String {
     }
 }
 
-/// The title of a joint, or its file where it has none.
+/// The title of the joint of a report.
 pub(super) fn title(report: &Report) -> &str {
-    if report.joint.title.is_empty() { &report.joint.file } else { &report.joint.title }
+    joint_title(&report.joint)
+}
+
+/// The title of a joint, or its file where it has none.
+pub(in crate::output) fn joint_title(joint: &Joint) -> &str {
+    if joint.title.is_empty() { &joint.file } else { &joint.title }
 }
 
 /// The utilisation of a case: 0 without load, a dash without answer.
@@ -108,4 +113,22 @@ pub(super) fn deciding(report: &Report) -> String {
 /// The law and how the welds are integrated, in brief.
 pub(super) fn law_in_brief(joint: &Joint) -> String {
     format!("{}, {}", joint.law.id, discretisation(joint))
+}
+
+/// The ratio of the two methods in words.
+pub(in crate::output) fn ratio(ratio: f64) -> String {
+    let share = 1.0 - 1.0 / ratio;
+    if share.abs() < 0.0005 {
+        "Both methods give the same nominal strength.".to_owned()
+    } else if share > 0.0 {
+        format!("The elastic method leaves {} of the ultimate strength unused.", percent(share))
+    } else {
+        format!("The elastic method exceeds the ultimate strength by {}.", percent(share))
+    }
+}
+
+/// What becomes of an ultimate analysis under rules that do not accept it.
+pub(in crate::output) fn not_accepted(joint: &Joint) -> String {
+    let edition = &joint.rules.edition;
+    format!("{edition} does not accept the ultimate analysis: it is information and decides nothing.")
 }

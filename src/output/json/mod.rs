@@ -7,7 +7,7 @@
 //! `not_solved` and `coefficients` in a case.
 
 mod case;
-mod value;
+pub(super) mod value;
 
 use crate::analysis::{Grade, Report};
 use crate::diagnostic::{Diagnostic, Severity};
@@ -46,7 +46,7 @@ struct FindingJson<'a> {
 }
 
 #[derive(Serialize)]
-struct FaultJson<'a> {
+pub(super) struct FaultJson<'a> {
     severity: &'static str,
     file: &'a str,
     line: Option<usize>,

@@ -5,7 +5,7 @@ use crate::output::number::{rounded, rounded_up};
 use serde::{Serialize, Serializer};
 
 /// A number rounded to 12 significant digits; `null` when it is not finite.
-pub(super) struct Number(pub(super) f64);
+pub(in crate::output) struct Number(pub(in crate::output) f64);
 
 impl Serialize for Number {
     fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
@@ -14,7 +14,7 @@ impl Serialize for Number {
 }
 
 /// A utilisation: like [`Number`], rounded up.
-pub(super) struct Utilisation(pub(super) f64);
+pub(in crate::output) struct Utilisation(pub(in crate::output) f64);
 
 impl Serialize for Utilisation {
     fn serialize<S: Serializer>(&self, serializer: S) -> Result<S::Ok, S::Error> {
@@ -24,7 +24,7 @@ impl Serialize for Utilisation {
 
 /// Three components.
 #[derive(Serialize)]
-pub(super) struct Triple([Number; 3]);
+pub(in crate::output) struct Triple([Number; 3]);
 
 impl From<Vector> for Triple {
     fn from(vector: Vector) -> Self {
@@ -40,7 +40,7 @@ impl From<[f64; 3]> for Triple {
 
 /// Two components.
 #[derive(Serialize)]
-pub(super) struct Pair([Number; 2]);
+pub(in crate::output) struct Pair([Number; 2]);
 
 impl From<[f64; 2]> for Pair {
     fn from(values: [f64; 2]) -> Self {

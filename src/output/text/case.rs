@@ -3,7 +3,7 @@
 use crate::analysis::{Analyses, CaseReport, Coefficients, Status, Strength};
 use crate::model::{Basis, Joint, Vector};
 use crate::output::layout::{Emphasis, Layout};
-use crate::output::number::{MISSING, degrees, people, percent, point, quantity, small, utilisation};
+use crate::output::number::{MISSING, degrees, people, point, quantity, small, utilisation};
 use crate::output::table::{Cell, Side, Table, clip, hanging, labelled};
 use crate::output::words;
 use crate::solvers::{Place, Ultimate};
@@ -137,30 +137,15 @@ fn remarks(case: &CaseReport, joint: &Joint, layout: &Layout) -> String {
             small(failure.residual)
         ));
     }
-    sentences.extend(case.ultimate_over_elastic().map(ratio));
+    sentences.extend(case.ultimate_over_elastic().map(words::ratio));
     if !joint.accepts(Basis::Ultimate) && case.ultimate().is_some() {
-        sentences.push(format!(
-            "{} does not accept the ultimate analysis: it is information and decides nothing.",
-            joint.rules.edition
-        ));
+        sentences.push(words::not_accepted(joint));
     }
     if let Some(answer) = case.ultimate() {
         sentences.extend(states(answer, joint.units));
     }
     sentences.extend(case.coefficients(joint).map(coefficients));
     sentences.iter().map(|sentence| hanging("  ", sentence, layout.columns())).collect()
-}
-
-/// The ratio of the two methods in words.
-fn ratio(ratio: f64) -> String {
-    let share = 1.0 - 1.0 / ratio;
-    if share.abs() < 0.0005 {
-        "Both methods give the same nominal strength.".to_owned()
-    } else if share > 0.0 {
-        format!("The elastic method leaves {} of the ultimate strength unused.", percent(share))
-    } else {
-        format!("The elastic method exceeds the ultimate strength by {}.", percent(share))
-    }
 }
 
 /// States, peak and evidence of the ultimate analysis.
@@ -264,9 +249,9 @@ mod tests {
 
     #[test]
     fn the_ratio_is_said_in_words() {
-        assert_eq!(ratio(1.25), "The elastic method leaves 20.0 % of the ultimate strength unused.");
-        assert_eq!(ratio(0.8), "The elastic method exceeds the ultimate strength by 25.0 %.");
-        assert_eq!(ratio(1.000_001), "Both methods give the same nominal strength.");
+        assert_eq!(words::ratio(1.25), "The elastic method leaves 20.0 % of the ultimate strength unused.");
+        assert_eq!(words::ratio(0.8), "The elastic method exceeds the ultimate strength by 25.0 %.");
+        assert_eq!(words::ratio(1.000_001), "Both methods give the same nominal strength.");
     }
 
     #[test]

@@ -39,21 +39,26 @@ fn verdict(report: &Report, layout: &Layout) -> String {
 /// File, rules, law and line properties.
 fn input(report: &Report, layout: &Layout) -> String {
     let joint = &report.joint;
+    let mut rows = given(joint);
+    rows.extend(section(joint, &report.section));
+    labelled(0, &rows, layout.columns())
+}
+
+/// What a joint is verified with: file, rules, law, kind of loads.
+pub(in crate::output) fn given(joint: &Joint) -> Vec<(&'static str, String)> {
     let rules = &joint.rules;
     let loads = if joint.combined {
         "combinations of factored cases"
     } else {
         "cases taken as factored (for ASD: combined) already"
     };
-    let mut rows = vec![
+    vec![
         ("File", joint.file.clone()),
         ("Rules", format!("{} ({}); {}", rules.title, rules.id, words::confirmation(rules.status()))),
         ("Design factor", design_factor(&rules.design)),
         ("Law", law(joint)),
         ("Loads", loads.to_owned()),
-    ];
-    rows.extend(section(joint, &report.section));
-    labelled(0, &rows, layout.columns())
+    ]
 }
 
 fn law(joint: &Joint) -> String {

@@ -5,8 +5,8 @@
 
 mod case;
 mod cases;
-mod cautions;
-mod joint;
+pub(super) mod cautions;
+pub(super) mod joint;
 
 use super::layout::{Emphasis, Layout};
 use super::number::MISSING;

@@ -51,6 +51,14 @@ pub struct Jump {
     pub strength: [Demand; 2],
 }
 
+impl Jump {
+    /// Change of the strength from the first side to the second, over the first.
+    #[must_use]
+    pub fn relative_change(&self) -> f64 {
+        self.load_factor[1] / self.load_factor[0] - 1.0
+    }
+}
+
 /// One side of an interval.
 #[derive(Debug, Clone, Copy)]
 struct Side {

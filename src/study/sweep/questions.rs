@@ -1,9 +1,10 @@
 //! What a reader asks of a sweep: does it hold, where is the elastic method farthest off, where does the
 //! verdict change, what is wrong with the points that have no answer.
 
-use super::{Answer, Point, PointCase, Sweep};
+use super::{Answer, Jump, Point, PointCase, Sweep};
 use crate::analysis::Status;
 use crate::diagnostic::Diagnostic;
+use std::collections::BTreeMap;
 
 /// Points, by index, at which the ratio of the two methods is extreme.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -21,6 +22,8 @@ pub struct Crossing {
     pub points: [usize; 2],
     /// The utilisations of the joint at them.
     pub utilisation: [f64; 2],
+    /// Whether the joint holds at the first of them, and so not at the second.
+    pub holds_first: bool,
 }
 
 /// A fault and the points that have it.
@@ -57,6 +60,12 @@ impl PointCase {
 }
 
 impl Answer {
+    /// Utilisation of the governing case; `None` when some case has no answer.
+    #[must_use]
+    pub fn utilisation(&self) -> Option<f64> {
+        self.cases.get(self.governing?)?.utilisation()
+    }
+
     /// Whether the joint holds at this point.
     #[must_use]
     pub fn status(&self) -> Status {
@@ -86,6 +95,20 @@ impl Sweep {
         point.outcome.as_ref().ok()?.cases.get(self.shown)
     }
 
+    /// Index, in each variable's values, of a point.
+    #[must_use]
+    pub fn indices(&self, point: usize) -> Vec<usize> {
+        let mut rest = point;
+        let mut indices: Vec<usize> = Vec::new();
+        for variable in self.variables.iter().rev() {
+            let length = variable.values.len().max(1);
+            indices.push(rest % length);
+            rest /= length;
+        }
+        indices.reverse();
+        indices
+    }
+
     /// The worst of all points: no answer, then exceeded, then satisfied.
     #[must_use]
     pub fn verdict(&self) -> Status {
@@ -96,6 +119,38 @@ impl Sweep {
     #[must_use]
     pub fn count(&self, status: Status) -> usize {
         self.points.iter().filter(|point| point.status() == status).count()
+    }
+
+    /// Which cases govern, and at how many points each.
+    #[must_use]
+    pub fn governing_cases(&self) -> BTreeMap<usize, usize> {
+        let mut counts = BTreeMap::new();
+        for case in self.points.iter().filter_map(|point| point.outcome.as_ref().ok()?.governing) {
+            *counts.entry(case).or_insert(0) += 1;
+        }
+        counts
+    }
+
+    /// How many points of the shown case have several equilibrium states at first rupture.
+    #[must_use]
+    pub fn with_several_states(&self) -> usize {
+        self.shown_cases().filter(|case| case.states > 1).count()
+    }
+
+    /// How many points of the shown case may lack a state.
+    #[must_use]
+    pub fn incomplete(&self) -> usize {
+        self.shown_cases().filter(|case| case.incomplete).count()
+    }
+
+    fn shown_cases(&self) -> impl Iterator<Item = &PointCase> {
+        self.points.iter().filter_map(|point| self.shown_case(point))
+    }
+
+    /// The jump of largest relative change.
+    #[must_use]
+    pub fn largest_jump(&self) -> Option<&Jump> {
+        self.jumps.iter().max_by(|a, b| a.relative_change().abs().total_cmp(&b.relative_change().abs()))
     }
 
     /// The largest and smallest ratio of the two methods in the shown case, each at its first point; `None`
@@ -127,13 +182,16 @@ impl Sweep {
         }
         let answered = |point: &Point| {
             let answer = point.outcome.as_ref().ok()?;
-            let utilisation = answer.cases.get(answer.governing?)?.utilisation()?;
-            Some((answer.status() == Status::Satisfied, utilisation))
+            Some((answer.status() == Status::Satisfied, answer.utilisation()?))
         };
         let crossing = |(index, pair): (usize, &[Point])| {
             let (before, after) = (answered(pair.first()?)?, answered(pair.get(1)?)?);
             let changes = before.0 != after.0;
-            changes.then_some(Crossing { points: [index, index + 1], utilisation: [before.1, after.1] })
+            changes.then_some(Crossing {
+                points: [index, index + 1],
+                utilisation: [before.1, after.1],
+                holds_first: before.0,
+            })
         };
         self.points.windows(2).enumerate().filter_map(crossing).collect()
     }

@@ -1,0 +1,21 @@
+//! Sweeps as text for people, as a table for spreadsheets, and as JSON for other programs.
+//!
+//! ```text
+//! Sweep -> sweep_text    one variable: a table with its jumps (curve.rs); two: matrices (matrix.rs)
+//!       -> sweep_csv     one row per point and case
+//!       -> sweep_json    schema weldpole.sweep/1
+//! ```
+
+mod csv;
+mod curve;
+#[cfg(test)]
+mod fixture;
+mod json;
+mod labels;
+mod matrix;
+mod summary;
+mod text;
+
+pub use csv::sweep_csv;
+pub use json::sweep_json;
+pub use text::sweep_text;
