@@ -32,7 +32,9 @@ struct Quantity<'s> {
     variable: &'s Variable,
     /// Of a case, in the unit of the axis.
     value: &'s dyn Fn(&PointCase) -> Option<f64>,
-    /// On both sides of a jump, in the unit of the axis; `None` where the quantity has none.
+    /// Whether it jumps with the ultimate strength.
+    jumps: bool,
+    /// On both sides of a jump, in the unit of the axis; `None` where it is known at the points alone.
     at_jump: &'s dyn Fn(&Jump, usize) -> Option<f64>,
     /// Whether a curve runs on between two neighbours.
     joined: &'s dyn Fn(&PointCase, &PointCase) -> bool,
@@ -54,11 +56,7 @@ impl Quantity<'_> {
         let mut before: Option<usize> = None;
         for (index, place) in self.points() {
             let follows = before.is_some_and(|before| before + 1 == index && self.runs_on(before, index));
-            let jump = self
-                .sweep
-                .jumps
-                .iter()
-                .find(|jump| before == Some(jump.points[0]) && jump.points[1] == index);
+            let jump = self.jump_between(before, index);
             let sides = jump.and_then(|jump| Some([(self.at_jump)(jump, 0)?, (self.at_jump)(jump, 1)?]));
             match (pieces.last_mut(), jump, sides) {
                 (Some(piece), Some(jump), Some([left, right])) => {
@@ -71,6 +69,11 @@ impl Quantity<'_> {
             before = Some(index);
         }
         pieces
+    }
+
+    fn jump_between(&self, before: Option<usize>, index: usize) -> Option<&Jump> {
+        let between = |jump: &&Jump| before == Some(jump.points[0]) && jump.points[1] == index;
+        self.sweep.jumps.iter().filter(|_| self.jumps).find(between)
     }
 
     fn runs_on(&self, one: usize, next: usize) -> bool {
@@ -112,6 +115,7 @@ pub(super) fn drawn(sweep: &Sweep, variable: &Variable) -> Canvas {
     strength(&mut canvas, sweep, variable, x);
     ratio(&mut canvas, sweep, variable, x);
     utilisation(&mut canvas, sweep, variable, x);
+    as_given(&mut canvas, variable, x);
     let panel = Area::new(NOTES[0], NOTES[1], NOTES[2], NOTES[3]);
     notes::draw(&mut canvas, &panel, sweep);
     sheet::foot(&mut canvas);
@@ -121,6 +125,25 @@ pub(super) fn drawn(sweep: &Sweep, variable: &Variable) -> Canvas {
 fn area(index: usize) -> Area {
     let [top, bottom] = HEIGHTS[index];
     Area::new(ACROSS[0], top, ACROSS[1], bottom)
+}
+
+/// A line through all plots at the value the file has.
+fn as_given(canvas: &mut Canvas, variable: &Variable, x: [f64; 2]) {
+    let Some(given) = variable.given.map(|given| variable.shown(given)) else { return };
+    if given < x[0] || given > x[1] {
+        return;
+    }
+    for index in 0..HEIGHTS.len() {
+        let plot = Plot::new(area(index), x, [0.0, 1.0]);
+        canvas.line(plot.spot(given, 0.0), plot.spot(given, 1.0), Stroke::dashed(Ink::QUIET, 1.0, 2.0, 3.0));
+    }
+    let plot = Plot::new(area(0), x, [0.0, 1.0]);
+    let words = "as in the file";
+    let at = plot.spot(given, 1.0) + Spot::new(6.0, 7.0 + font::ASCENT * SMALL);
+    let text = Text { size: SMALL, ink: Ink::QUIET, halo: true, ..Text::new(words, at) };
+    let fits = text.area().most.x <= plot.area.most.x;
+    let other = Text { anchor: Anchor::End, at: at - Spot::new(12.0, 0.0), ..text.clone() };
+    canvas.text(if fits { &text } else { &other });
 }
 
 /// From zero to a little above the values.
@@ -142,14 +165,18 @@ fn strength(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]
     let elastic_value = |case: &PointCase| shown(case, case.elastic?.load_factor);
     let peak_value = |case: &PointCase| shown(case, case.peak_load_factor?);
     let side = |jump: &Jump, side: usize| Some(units.shown(dimension, jump.strength[side].size));
-    let no_break = always;
-    let ultimate = Quantity { sweep, variable, value: &ultimate_value, at_jump: &side, joined: &no_break };
-    let elastic = Quantity { sweep, variable, value: &elastic_value, at_jump: &no_jump, joined: &no_break };
-    let peak = Quantity { sweep, variable, value: &peak_value, at_jump: &no_jump, joined: &no_break };
+    let ultimate =
+        Quantity { sweep, variable, value: &ultimate_value, jumps: true, at_jump: &side, joined: &always };
+    let elastic =
+        Quantity { sweep, variable, value: &elastic_value, jumps: false, at_jump: &no_jump, joined: &always };
+    let peak =
+        Quantity { sweep, variable, value: &peak_value, jumps: false, at_jump: &no_jump, joined: &always };
     let values = [ultimate.values(), elastic.values(), peak.values()].concat();
-    let plot = Plot::new(area(0), x, from_zero(&values));
+    let plot = Plot::new(area(0), x, from_zero(&values)).in_units(&variable.unit, "");
     plot.axes(canvas, None, &format!("nominal strength, {}", units.symbol(dimension)));
-    peak.draw(canvas, &plot, Ink::PEAK, 1.6, None);
+    if notes::peak_differs(sweep) {
+        peak.draw(canvas, &plot, Ink::PEAK, 1.6, None);
+    }
     elastic.draw(canvas, &plot, Ink::ELASTIC, 2.4, Some(Mark::Square));
     ultimate.draw(canvas, &plot, Ink::ULTIMATE, 2.4, Some(Mark::Dot));
     open_ends(canvas, &plot, sweep, variable, &side);
@@ -164,12 +191,13 @@ fn strength(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]
 
 fn ratio(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
     let value = |case: &PointCase| case.ultimate_over_elastic();
-    // The elastic strength is continuous, so both sides of a jump share the one between them.
+    // Both sides of a jump are located for the ultimate strength alone.
     let no_jump = |_: &Jump, _: usize| None;
-    let quantity = Quantity { sweep, variable, value: &value, at_jump: &no_jump, joined: &always };
+    let quantity =
+        Quantity { sweep, variable, value: &value, jumps: true, at_jump: &no_jump, joined: &always };
     let [least, most] = range(quantity.values().into_iter().chain([1.0]));
     let margin = 0.1 * (most - least);
-    let plot = Plot::new(area(1), x, [least - margin, most + margin]);
+    let plot = Plot::new(area(1), x, [least - margin, most + margin]).in_units(&variable.unit, "");
     plot.axes(canvas, None, "ultimate / elastic");
     canvas.line(plot.spot(x[0], 1.0), plot.spot(x[1], 1.0), Stroke::dashed(Ink::QUIET, 1.2, 6.0, 4.0));
     quantity.draw(canvas, &plot, Ink::TEXT, 2.0, Some(Mark::Dot));
@@ -180,14 +208,12 @@ fn utilisation(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64;
     let no_jump = |_: &Jump, _: usize| None;
     let basis = |case: &PointCase| case.verification.as_ref().map(|verification| verification.basis);
     let same_basis = |one: &PointCase, next: &PointCase| basis(one) == basis(next);
-    let quantity = Quantity { sweep, variable, value: &value, at_jump: &no_jump, joined: &same_basis };
+    let quantity =
+        Quantity { sweep, variable, value: &value, jumps: true, at_jump: &no_jump, joined: &same_basis };
     let values = quantity.values();
-    let plot = Plot::new(area(2), x, from_zero(&[values.as_slice(), &[1.0]].concat()));
-    let title = match variable.unit.as_str() {
-        "" => variable.name.clone(),
-        unit => format!("{}, {unit}", notes::name(variable)),
-    };
-    plot.axes(canvas, Some(&title), "utilisation");
+    let plot =
+        Plot::new(area(2), x, from_zero(&[values.as_slice(), &[1.0]].concat())).in_units(&variable.unit, "");
+    plot.axes(canvas, Some(&notes::axis(variable)), "utilisation");
     let limit = Stroke::dashed(Ink::EXCEEDED, 1.4, 7.0, 4.0);
     canvas.line(plot.spot(x[0], 1.0), plot.spot(x[1], 1.0), limit);
     let at = plot.spot(x[1], 1.0) + Spot::new(8.0, 0.5 * font::CAPITALS * SMALL);

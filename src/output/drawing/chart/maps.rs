@@ -16,11 +16,11 @@ use crate::study::sweep::{PointCase, Sweep, Variable};
 use std::collections::BTreeSet;
 
 /// Size of the page, px.
-const PAGE: (f64, f64) = (1200.0, 962.0);
+const PAGE: (f64, f64) = (1200.0, 978.0);
 /// Left edges of the maps.
 const LEFT: [f64; 2] = [80.0, 676.0];
 /// Upper edges of the maps.
-const TOP: [f64; 2] = [128.0, 492.0];
+const TOP: [f64; 2] = [128.0, 508.0];
 /// Size of a map, px.
 const SIZE: (f64, f64) = (436.0, 296.0);
 /// Most levels of a map.
@@ -73,7 +73,8 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
             Area::new(left, top, left + SIZE.0, top + SIZE.1),
             range(across.values.iter().map(|value| across.shown(*value))),
             range(up.values.iter().map(|value| up.shown(*value))),
-        );
+        )
+        .in_units(&across.unit, &up.unit);
         // Titles of the x axis only below the lower maps, those of the y axis only beside the left ones.
         draw(&mut canvas, sweep, [across, up], &torn, map, &plot);
     }
@@ -126,8 +127,22 @@ fn draw(
         fill(*level, shade(as_float(band) / bands));
     }
     contours(canvas, &field, &levels, map.limit, plot, &spot);
+    if let (Some(x), Some(y)) = (across.given, up.given) {
+        as_given(canvas, plot, plot.spot(across.shown(x), up.shown(y)));
+    }
     plot.axes_over(canvas, &notes::axis(across), &notes::axis(up), &map.title);
     legend(canvas, plot, &levels, extent);
+}
+
+/// A cross at the values that the file has.
+fn as_given(canvas: &mut Canvas, plot: &Plot, at: Spot) {
+    if plot.area.contains(at) {
+        for (ink, width) in [(Ink::PAPER, 4.4), (Ink::TEXT, 1.8)] {
+            for across in [Spot::new(6.0, 6.0), Spot::new(6.0, -6.0)] {
+                canvas.line(at - across, at + across, Stroke::solid(ink, width));
+            }
+        }
+    }
 }
 
 /// The paler part of the ramp, so that lines and numbers show on it.
@@ -145,7 +160,12 @@ fn contours(
 ) {
     let mut space = Space::new(plot.area.grown(-4.0));
     let strong = limit.map(|limit| (limit, Stroke::solid(Ink::EXCEEDED, 2.6), Ink::EXCEEDED));
-    let usual = levels.iter().map(|level| (*level, Stroke::solid(Ink::TEXT, 1.0), Ink::TEXT));
+    #[allow(clippy::float_cmp)] // a tick that is the limit is exactly it
+    let is_limit = |level: &&f64| limit == Some(**level);
+    let usual = levels
+        .iter()
+        .filter(|level| !is_limit(level))
+        .map(|level| (*level, Stroke::solid(Ink::TEXT, 1.0), Ink::TEXT));
     let drawn: Vec<(f64, Ink, Vec<[Spot; 2]>)> = usual
         .chain(strong)
         .map(|(level, stroke, ink)| {
@@ -170,9 +190,10 @@ fn number(canvas: &mut Canvas, space: &mut Space, level: f64, ink: Ink, mut piec
     pieces.sort_by(|a, b| distance(a).total_cmp(&distance(b)));
     for [from, to] in pieces {
         let at = (from + to) / 2.0 + Spot::new(0.0, 0.5 * font::CAPITALS * SMALL);
-        let text = Text { size: SMALL, ink, anchor: Anchor::Middle, halo: true, ..Text::new(&words, at) };
+        let text = Text { size: SMALL, ink, anchor: Anchor::Middle, ..Text::new(&words, at) };
         if space.is_free(&text.area()) {
             space.take(text.area());
+            canvas.area(&text.area().grown(1.0), Some(Ink::PAPER), None);
             canvas.text(&text);
             return;
         }

@@ -15,6 +15,10 @@ use plotters::style::{Color, RGBColor};
 /// Why plotters cannot fail here.
 const PROOF: &str = "the page takes every line, and the part of it that a plot has is not shared";
 
+/// The unit whose round numbers are parts of a turn.
+const DEGREES: &str = "deg";
+/// Its round steps.
+const STEPS_IN_DEGREES: [f64; 6] = [15.0, 30.0, 45.0, 90.0, 180.0, 360.0];
 /// Most ticks along an axis.
 const MOST_TICKS: usize = 9;
 
@@ -25,6 +29,8 @@ pub(super) struct Plot {
     pub(super) area: Area,
     x: [f64; 2],
     y: [f64; 2],
+    /// Whether the axes are in degrees.
+    degrees: [bool; 2],
 }
 
 /// How points are marked.
@@ -69,9 +75,28 @@ pub(super) fn ticks(range: [f64; 2], most: usize) -> Vec<f64> {
     axis.key_points(BoldPoints(most))
 }
 
+/// Round numbers of degrees within a range, at most so many; those of other units where the range is small.
+fn ticks_in_degrees([least, most]: [f64; 2], count: usize) -> Vec<f64> {
+    let fits = |step: &&f64| (most - least) / **step + 1.0 <= super::super::ink::as_float(count);
+    let step = STEPS_IN_DEGREES.iter().find(fits).filter(|step| most - least >= 2.0 * **step);
+    let Some(step) = step else { return ticks([least, most], count) };
+    let mut found = Vec::new();
+    let mut tick = (least / step - 1e-9).ceil() * step;
+    while tick <= most + 1e-9 * step {
+        found.push(tick + 0.0);
+        tick += step;
+    }
+    found
+}
+
 impl Plot {
     pub(super) fn new(area: Area, x: [f64; 2], y: [f64; 2]) -> Self {
-        Self { area, x, y }
+        Self { area, x, y, degrees: [false, false] }
+    }
+
+    /// The same with ticks that suit degrees along the axes that have this unit.
+    pub(super) fn in_units(self, x: &str, y: &str) -> Self {
+        Self { degrees: [x, y].map(|unit| unit == DEGREES), ..self }
     }
 
     /// Where a point of the plot is on the page.
@@ -138,11 +163,16 @@ impl Plot {
         }
     }
 
+    fn ticks(&self, axis: usize, most: usize) -> Vec<f64> {
+        let range = if axis == 0 { self.x } else { self.y };
+        if self.degrees[axis] { ticks_in_degrees(range, most) } else { ticks(range, most) }
+    }
+
     /// Ticks whose numbers stand clear of each other.
     fn x_ticks(&self) -> Vec<f64> {
         let mut most = MOST_TICKS;
         loop {
-            let found = ticks(self.x, most);
+            let found = self.ticks(0, most);
             let widest = found.iter().map(|value| font::width(&trimmed(*value), SMALL)).fold(0.0, f64::max);
             let apart = match found.as_slice() {
                 [first, second, ..] => (self.spot(*second, 0.0) - self.spot(*first, 0.0)).x.abs(),
@@ -161,7 +191,7 @@ impl Plot {
         while super::super::ink::as_float(most) > room && most > 2 {
             most -= 1;
         }
-        ticks(self.y, most)
+        self.ticks(1, most)
     }
 
     /// Draws a curve through points.
@@ -216,6 +246,17 @@ mod tests {
             assert!((2..=8).contains(&found.len()), "{range:?}: {found:?}");
             assert!(found.iter().all(|tick| *tick >= range[0] && *tick <= range[1]));
         }
+    }
+
+    #[test]
+    fn degrees_are_told_in_parts_of_a_turn() {
+        assert_eq!(
+            ticks_in_degrees([-180.0, 180.0], 9),
+            [-180.0, -135.0, -90.0, -45.0, 0.0, 45.0, 90.0, 135.0, 180.0]
+        );
+        assert_eq!(ticks_in_degrees([-10.0, 80.0], 9), [0.0, 15.0, 30.0, 45.0, 60.0, 75.0]);
+        assert!(ticks_in_degrees([60.0, 62.0], 9).len() > 2);
+        assert!(ticks_in_degrees([0.0, 36_000.0], 9).len() <= 9);
     }
 
     #[test]
