@@ -8,6 +8,7 @@ mod architecture;
 mod cli;
 mod derivatives;
 mod diagnostics;
+mod drawings;
 mod elements;
 mod equilibrium;
 mod fixture;

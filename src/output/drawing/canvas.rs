@@ -1,7 +1,7 @@
 //! A page on which lines, areas and texts are put: it becomes an SVG document.
 //!
-//! x points right, y down, lengths are in px. Coordinates are rounded to hundredths in `number.rs`. The boxes of all texts are kept, so that a
-//! test can tell whether any two overlap. Source: Scalable Vector Graphics (SVG) 1.1, W3C Recommendation 2011.
+//! x points right, y down, lengths are in px. Coordinates are rounded to hundredths in `number.rs`. Source: Scalable Vector
+//! Graphics (SVG) 1.1, W3C Recommendation 2011; `paint-order` is from SVG 2.
 
 use super::font;
 use super::ink::Ink;
@@ -145,23 +145,17 @@ pub(super) const SMALL: f64 = 13.5;
 pub(super) struct Canvas {
     size: Spot,
     body: String,
-    texts: Vec<Area>,
 }
 
 impl Canvas {
     /// An empty page.
     pub(super) fn new(width: f64, height: f64) -> Self {
-        Self { size: Spot::new(width, height), body: String::new(), texts: Vec::new() }
+        Self { size: Spot::new(width, height), body: String::new() }
     }
 
     /// The whole page.
     pub(super) fn page(&self) -> Area {
         Area { least: Spot::zeros(), most: self.size }
-    }
-
-    /// Boxes of the texts put so far.
-    pub(super) fn texts(&self) -> &[Area] {
-        &self.texts
     }
 
     fn put(&mut self, element: std::fmt::Arguments<'_>) {
@@ -208,7 +202,6 @@ impl Canvas {
         if text.words.is_empty() {
             return;
         }
-        self.texts.push(text.area());
         let (x, y) = (coordinate(text.at.x), coordinate(text.at.y));
         let anchor = match text.anchor {
             Anchor::Start => "",

@@ -30,6 +30,8 @@ pub(super) struct Space {
 pub(super) struct Placed {
     /// The box of the text.
     pub(super) area: Area,
+    /// What it belongs to.
+    pub(super) wish: Spot,
     /// Whether it is so far from its wished place that a line should lead to it.
     pub(super) led: bool,
 }
@@ -81,8 +83,8 @@ impl Space {
         self.lines.iter().filter(|[from, to]| crosses(&grown, *from, *to)).count()
     }
 
-    /// Finds and takes the best free place of a box near `wish`, `reach` beside it at least, first in `direction`.
-    pub(super) fn place(&mut self, size: Spot, wish: Spot, reach: f64, direction: Spot) -> Option<Placed> {
+    /// The cheapest free place of a box near `wish`, `reach` beside it at least, first in `direction`; and its cost.
+    fn best(&self, size: Spot, wish: Spot, reach: f64, direction: Spot) -> Option<(f64, Placed)> {
         let heading = if direction.norm() > 0.0 { direction.y.atan2(direction.x) } else { 0.0 };
         let mut best: Option<(f64, Placed)> = None;
         for ring in RINGS {
@@ -101,23 +103,34 @@ impl Space {
                 }
                 let cost = cost + CROSSING * super::ink::as_float(self.crossings(&area));
                 if best.as_ref().is_none_or(|(known, _)| cost < *known) {
-                    best = Some((cost, Placed { area, led: ring >= LEADER }));
+                    best = Some((cost, Placed { area, wish, led: ring >= LEADER }));
                 }
             }
         }
-        let (_, placed) = best?;
-        self.take(placed.area);
-        Some(placed)
+        best
     }
 
-    /// Places a text near `wish` and puts it on the canvas; `None` when there is no room.
+    /// Places a text near its wish and puts it on the canvas; `None` when there is no room.
     pub(super) fn label(&mut self, canvas: &mut Canvas, label: &Label<'_>) -> Option<Placed> {
-        let text = Text { halo: true, ..label.text.clone() };
-        let level = Text { at: Spot::zeros(), anchor: Anchor::Start, ..text.clone() };
-        let area = level.area();
-        let placed = self.place(area.size(), label.wish, label.reach, label.direction)?;
-        let at = Spot::new(placed.area.least.x, placed.area.least.y + font::ASCENT * text.size);
-        canvas.text(&Text { at, anchor: Anchor::Start, ..text });
+        self.label_one_of(canvas, std::slice::from_ref(label))
+    }
+
+    /// Places one text at the best of several wishes; the first of equals.
+    pub(super) fn label_one_of(&mut self, canvas: &mut Canvas, labels: &[Label<'_>]) -> Option<Placed> {
+        let mut best: Option<(f64, Placed, &Label<'_>)> = None;
+        for label in labels {
+            let level = Text { at: Spot::zeros(), anchor: Anchor::Start, ..label.text.clone() };
+            let found = self.best(level.area().size(), label.wish, label.reach, label.direction);
+            if let Some((cost, placed)) = found
+                && best.as_ref().is_none_or(|(known, ..)| cost < *known)
+            {
+                best = Some((cost, placed, label));
+            }
+        }
+        let (_, placed, label) = best?;
+        self.take(placed.area);
+        let at = Spot::new(placed.area.least.x, placed.area.least.y + font::ASCENT * label.text.size);
+        canvas.text(&Text { at, anchor: Anchor::Start, halo: true, ..label.text.clone() });
         Some(placed)
     }
 }
@@ -181,7 +194,8 @@ mod tests {
         let mut space = Space::new(Area::new(0.0, 0.0, 120.0, 60.0));
         let (wish, size) = (Spot::new(60.0, 30.0), Spot::new(40.0, 12.0));
         let mut placed: Vec<Area> = Vec::new();
-        while let Some(found) = space.place(size, wish, 0.0, Spot::new(1.0, 0.0)) {
+        while let Some((_, found)) = space.best(size, wish, 0.0, Spot::new(1.0, 0.0)) {
+            space.take(found.area);
             assert!(placed.iter().all(|area| !area.overlaps(&found.area)));
             assert!(space.frame().holds(&found.area));
             placed.push(found.area);
@@ -194,8 +208,8 @@ mod tests {
     fn a_line_is_avoided_where_there_is_another_place() {
         let mut space = Space::new(Area::new(0.0, 0.0, 200.0, 200.0));
         space.take_line(Spot::new(100.0, 100.0), Spot::new(200.0, 100.0));
-        let found =
-            space.place(Spot::new(30.0, 10.0), Spot::new(100.0, 100.0), 0.0, Spot::new(1.0, 0.0)).unwrap();
+        let (_, found) =
+            space.best(Spot::new(30.0, 10.0), Spot::new(100.0, 100.0), 0.0, Spot::new(1.0, 0.0)).unwrap();
         assert!(!crosses(&found.area, Spot::new(100.0, 100.0), Spot::new(200.0, 100.0)));
     }
 }

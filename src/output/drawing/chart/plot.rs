@@ -18,7 +18,7 @@ const PROOF: &str = "the page takes every line, and the part of it that a plot h
 /// The unit whose round numbers are parts of a turn.
 const DEGREES: &str = "deg";
 /// Its round steps.
-const STEPS_IN_DEGREES: [f64; 6] = [15.0, 30.0, 45.0, 90.0, 180.0, 360.0];
+const STEPS_IN_DEGREES: [f64; 9] = [2.0, 5.0, 10.0, 15.0, 30.0, 45.0, 90.0, 180.0, 360.0];
 /// Most ticks along an axis.
 const MOST_TICKS: usize = 9;
 

@@ -3,7 +3,8 @@
 //! | part | file |
 //! |---|---|
 //! | what is drawn, and what lies too far off | `subject.rs` |
-//! | welds as bands, coloured by deformation ratio, with their sizes | `welds.rs` |
+//! | welds as bands, coloured by deformation ratio | `bands.rs` |
+//! | sizes of the welds in words | `welds.rs` |
 //! | force on every piece of weld by both methods | `forces.rs` |
 //! | loads, line of action, eccentricity | `loads.rs` |
 //! | centroid, centre of rotation, critical points | `marks.rs` |
@@ -12,6 +13,7 @@
 //!
 //! The drawing is made twice: first to learn how far the arrows reach on the page, then with room for them.
 
+mod bands;
 mod dimensions;
 mod forces;
 mod loads;
@@ -67,7 +69,7 @@ fn drawn(report: &Report, case: &CaseReport) -> Canvas {
     let (view, forces, dimensions, group) = laid_out(&subject, &frame);
     let mut space = Space::new(frame);
     let mut remarks = Vec::new();
-    welds::draw(&mut canvas, &mut space, &subject, &view);
+    bands::draw(&mut canvas, &mut space, &subject, &view);
     forces::draw(&mut canvas, &mut space, &forces);
     marks::draw(&mut canvas, &mut space, &subject, &view);
     dimensions.draw(&mut canvas, &mut space, &subject, &view, &group);
@@ -104,7 +106,8 @@ fn laid_out(subject: &Subject<'_>, frame: &Area) -> (View, Forces, Dimensions, A
 fn overhang(subject: &Subject<'_>, view: &View, forces: &Forces) -> (Spot, Spot) {
     let (one, other) = (view.spot(subject.least), view.spot(subject.most));
     let (least, most) = (one.inf(&other), one.sup(&other));
-    let widest = subject.joint().group.welds().iter().map(|weld| welds::band(weld, view)).fold(0.0, f64::max);
+    let widest =
+        subject.joint().group.welds().iter().map(|weld| bands::width(weld, view)).fold(0.0, f64::max);
     let half = Spot::new(widest, widest) / 2.0;
     let (mut before, mut after) = (half, half);
     for arrow in &forces.arrows {
@@ -127,12 +130,14 @@ fn remarks(subject: &Subject<'_>, view: &View, missed: usize) -> Vec<String> {
     if subject.case.elastic().is_none() {
         remarks.push("The load is zero: nothing to resist.".to_owned());
     }
-    if welds::widened(joint, view) {
+    if bands::widened(joint, view) {
         remarks.push("Welds are drawn wider than to scale.".to_owned());
     }
-    if missed > 0 {
+    if missed == joint.group.welds().len() {
+        remarks.push("Too many welds to write a size at each.".to_owned());
+    } else if missed > 0 {
         let noun = if missed == 1 { "weld has" } else { "welds have" };
-        remarks.push(format!("{missed} {noun} no size at it for want of room: see above."));
+        remarks.push(format!("{missed} {noun} no size at it for want of room."));
     }
     let far = subject
         .applied()

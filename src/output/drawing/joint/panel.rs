@@ -4,6 +4,7 @@ use super::super::arrow::Arrow;
 use super::super::canvas::{Anchor, Area, BODY, Canvas, SMALL, Spot, Stroke, Text};
 use super::super::font;
 use super::super::ink::{Ink, as_float, ramp};
+use super::bands;
 use super::forces::{ELASTIC, Forces, ULTIMATE};
 use super::marks;
 use super::subject::Subject;
@@ -190,8 +191,8 @@ fn scale(column: &mut Column<'_>) {
     column.sentence("deformation / rupture limit", Ink::TEXT);
     let (left, width, height) = (column.left + 4.0, column.room() - 24.0, 12.0);
     let top = column.y;
-    let shades = as_float(welds::SHADES);
-    for shade in 0..welds::SHADES {
+    let shades = as_float(bands::SHADES);
+    for shade in 0..bands::SHADES {
         let from = left + width * as_float(shade) / shades;
         let area = Area::new(from, top, from + width / shades + 0.4, top + height);
         column.canvas.area(&area, Some(ramp(as_float(shade) / (shades - 1.0))), None);
@@ -220,13 +221,14 @@ fn sizes(column: &mut Column<'_>, subject: &Subject<'_>) {
         }
     }
     let line = font::LEADING * SMALL + 3.0;
-    // The heading, then as many sizes as there is room for, a word on the rest, and the rules.
-    let room = column.bottom - column.y - HEADING - 2.0 * line;
-    let mut shown = 0;
-    while shown < kinds.len() && as_float(shown + 1) * line <= room {
-        shown += 1;
+    // The heading, the sizes or as many as there is room for and a word on the rest, and the rules.
+    let lines_left = (column.bottom - column.y - HEADING) / line;
+    let mut shown = kinds.len();
+    let needed = |shown: usize| as_float(shown) + if shown < kinds.len() { 2.0 } else { 1.0 };
+    while shown > 0 && needed(shown) > lines_left {
+        shown -= 1;
     }
-    if shown == 0 {
+    if needed(shown) > lines_left {
         return;
     }
     column.heading("Welds");
@@ -235,7 +237,8 @@ fn sizes(column: &mut Column<'_>, subject: &Subject<'_>) {
         column.line(&format!("{count} {noun}, {size}: {} long", length(joint.units, *total)), Ink::TEXT);
     }
     if kinds.len() > shown {
-        column.line(&format!("and {} more sizes", kinds.len() - shown), Ink::QUIET);
+        let rest = kinds.len() - shown;
+        column.line(&format!("and {rest} more {}", if rest == 1 { "size" } else { "sizes" }), Ink::QUIET);
     }
     column.line(&format!("{}; {}", joint.rules.id, words::law_in_brief(joint)), Ink::QUIET);
 }
