@@ -4,9 +4,11 @@
 //! All joints are invented for the purpose.
 
 use crate::fixture::Stream;
-use weldpole::analysis::{Report, analyse};
+use weldpole::analysis::{Report, analyse, analyse_with};
 use weldpole::input::{Options, Template, catalog, read_joint};
+use weldpole::model::Joint;
 use weldpole::output::{joint_svg, sweep_svg};
+use weldpole::solvers::{Search, UltimateSettings};
 use weldpole::study::sweep::sweep;
 
 /// Random joints that are drawn.
@@ -89,11 +91,13 @@ fn is_sound(svg: &str, what: &str) {
     }
 }
 
+fn joint(text: &str) -> Joint {
+    let read = read_joint("joint.toml", text, &Options::default());
+    read.unwrap_or_else(|faults| panic!("{faults:?}\n{text}"))
+}
+
 fn report(text: &str) -> Report {
-    analyse(
-        &read_joint("joint.toml", text, &Options::default())
-            .unwrap_or_else(|faults| panic!("{faults:?}\n{text}")),
-    )
+    analyse(&joint(text))
 }
 
 /// Every case of a joint, drawn.
@@ -122,7 +126,7 @@ fn no_text_overlaps_another_in_the_examples() {
 
 #[test]
 fn no_text_overlaps_another_at_any_size() {
-    for (size, leg) in [(0.5, 0.02), (20.0, 3.0), (300.0, 6.0), (5000.0, 10.0), (2.0e6, 12.0)] {
+    for (size, leg) in [(0.5, 0.02), (20.0, 3.0), (300.0, 6.0), (5000.0, 10.0), (1.0e6, 12.0)] {
         let s = |share: f64| share * size;
         let welds =
             line("one", leg, [0.0, 0.0], [0.0, s(1.0)]) + &line("two", leg, [s(0.6), 0.0], [s(0.6), s(0.8)]);
@@ -173,7 +177,12 @@ fn no_text_overlaps_another_in_random_joints() {
                 text += &format!("moment = {}\n", random.between(-5.0, 5.0));
             }
         }
-        draw(&text, &format!("random joint {number}"));
+        // One state is enough for a drawing, and many times quicker.
+        let settings = UltimateSettings { search: Search::First, path: false, ..UltimateSettings::default() };
+        let report = analyse_with(&joint(&text), &settings);
+        for case in &report.cases {
+            is_sound(&joint_svg(&report, case), &format!("random joint {number}"));
+        }
     }
 }
 

@@ -245,6 +245,17 @@ fn a_jump_is_reported_where_it_is() {
     }
 }
 
+/// One state at 77 and at 82 degrees, three between: down by 6 %, then up by 3 %. The larger one is found.
+#[test]
+fn a_jump_between_points_of_one_state_is_found() {
+    let found = swept(LINES, &["load.angle=77:82:2"]);
+    assert!(found.points.iter().all(|point| only_case(point).states == 1));
+    let [jump] = found.jumps.as_slice() else { panic!("{:?}", found.jumps) };
+    // Pinned: from a sweep of whole degrees.
+    assert!((jump.at[0].to_degrees() - 77.5942).abs() < 1e-3, "{jump:?}");
+    assert!((jump.relative_change() + 0.062).abs() < 1e-3, "{jump:?}");
+}
+
 #[test]
 fn a_smooth_curve_has_no_jump() {
     for ranges in [

@@ -17,24 +17,11 @@ const SAME_RATIO: f64 = 5e-4;
 pub(super) fn text(sweep: &Sweep, labels: &Labels<'_>, layout: &Layout) -> String {
     let mut sentences = Vec::new();
     sentences.extend(crossings(&sweep.crossings(), labels));
-    sentences.extend(governed_by_others(sweep));
     sentences.extend(sweep.extremes().map(|extremes| self::extremes(extremes, labels)).unwrap_or_default());
     sentences.extend(jumps(sweep, labels));
-    let several = sweep.with_several_states();
-    if several > 0 {
-        sentences.push(format!(
-            "At {several} of {} points several equilibrium states at first rupture were found; the smallest load \
-             factor is used.",
-            sweep.points.len()
-        ));
-    }
-    let incomplete = sweep.incomplete();
-    if incomplete > 0 {
-        sentences.push(format!(
-            "At {} the search saw signs of a state it could not find: a smaller strength is \
-             possible there.",
-            points(incomplete)
-        ));
+    if sweep.variables.len() > 1 {
+        // The table of a single variable says the same in its footnotes.
+        sentences.extend(out_of_the_ordinary(sweep));
     }
     if !sweep.joint.accepts(Basis::Ultimate) {
         sentences.push(words::not_accepted(&sweep.joint));
@@ -48,6 +35,28 @@ pub(super) fn text(sweep: &Sweep, labels: &Labels<'_>, layout: &Layout) -> Strin
         block.push_str(&hanging("  - ", &sentence, layout.columns()));
     }
     block
+}
+
+/// How many points have several states, lack one, or are governed by another case.
+fn out_of_the_ordinary(sweep: &Sweep) -> Vec<String> {
+    let mut sentences = Vec::new();
+    sentences.extend(governed_by_others(sweep));
+    let several = sweep.with_several_states();
+    if several > 0 {
+        sentences.push(format!(
+            "At {several} of {} points several equilibrium states at first rupture were found; the smallest load \
+             factor is used.",
+            sweep.points.len()
+        ));
+    }
+    let incomplete = sweep.incomplete();
+    if incomplete > 0 {
+        sentences.push(format!(
+            "At {} the search saw signs of a state it could not find: a smaller strength is possible there.",
+            points(incomplete)
+        ));
+    }
+    sentences
 }
 
 fn crossings(crossings: &[Crossing], labels: &Labels<'_>) -> Vec<String> {

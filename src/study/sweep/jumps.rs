@@ -4,9 +4,10 @@
 //! vanishes (a fold), the smallest can change at once: a jump, which a line through points would hide.
 //!
 //! An interval between neighbours is suspicious when their numbers of states differ, a search was incomplete, or
-//! its change of `ln lambda` is out of proportion; with one variable also when one end has several states. It
-//! is halved again and again, keeping the half of larger change. After n halvings a continuous strength leaves
-//! `2^-n` of the whole change, and `2^(-n/2)` at the vertical tangent of a fold; a jump leaves itself.
+//! its change of `ln lambda` is out of proportion (of few intervals: notable); with one variable also when one
+//! end has several states. It is halved again and again, keeping the half of larger change. After n halvings a
+//! continuous strength leaves `2^-n` of the whole change, and `2^(-n/2)` at the vertical tangent of a fold; a
+//! jump leaves itself.
 //!
 //! | symbol | code | unit | meaning |
 //! |---|---|---|---|
@@ -35,6 +36,8 @@ const FIRST_HALVINGS: usize = 4;
 const OUT_OF_PROPORTION: f64 = 5.0;
 /// if it also exceeds this.
 const NOTABLE: f64 = 0.01;
+/// Intervals up to which a median says nothing: every notable change is looked into.
+const FEW_INTERVALS: usize = 6;
 
 /// A jump of the ultimate strength of the shown case.
 #[derive(Debug, Clone, PartialEq)]
@@ -146,12 +149,13 @@ fn suspicious(task: &Task<'_>, points: &[Point], shown: usize, variable: usize) 
     let mut changes: Vec<f64> = intervals.iter().map(|interval| interval.whole).collect();
     changes.sort_by(f64::total_cmp);
     let median = changes.get(changes.len() / 2).copied().unwrap_or(0.0);
+    let proportion = if changes.len() > FEW_INTERVALS { OUT_OF_PROPORTION * median } else { 0.0 };
     let alone = task.variables.len() == 1;
     let is_suspicious = |interval: &Interval| {
         let cases = interval.points.map(|index| shown_case(&points[index], shown));
         let states = cases.map(|case| case.map_or(0, |case| case.states));
         let incomplete = cases.iter().flatten().any(|case| case.incomplete);
-        let steep = interval.whole > NOTABLE && interval.whole > OUT_OF_PROPORTION * median;
+        let steep = interval.whole > NOTABLE.max(proportion);
         states[0] != states[1] || incomplete || steep || (alone && states[0].max(states[1]) > 1)
     };
     intervals.into_iter().filter(is_suspicious).collect()

@@ -2,6 +2,7 @@
 
 mod files;
 mod formats;
+mod sweeps;
 mod verdicts;
 
 use std::fs;

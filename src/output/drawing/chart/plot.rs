@@ -15,6 +15,8 @@ use plotters::style::{Color, RGBColor};
 /// Why plotters cannot fail here.
 const PROOF: &str = "the page takes every line, and the part of it that a plot has is not shared";
 
+/// Distance of the numbers below the frame: clear of the lowest number beside it, px.
+const BELOW: f64 = 9.0;
 /// The unit whose round numbers are parts of a turn.
 const DEGREES: &str = "deg";
 /// Its round steps.
@@ -114,7 +116,7 @@ impl Plot {
             let at = self.spot(value, self.y[0]);
             canvas.line(at, Spot::new(at.x, self.area.least.y), grid);
             if x_title.is_some() {
-                number(canvas, value, at + Spot::new(0.0, 6.0 + font::ASCENT * SMALL), Anchor::Middle);
+                number(canvas, value, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
             }
         }
         for value in self.y_ticks() {
@@ -132,7 +134,7 @@ impl Plot {
         for value in self.x_ticks() {
             let at = self.spot(value, self.y[0]);
             canvas.line(at, at + Spot::new(0.0, 4.0), tick);
-            number(canvas, value, at + Spot::new(0.0, 6.0 + font::ASCENT * SMALL), Anchor::Middle);
+            number(canvas, value, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
         }
         for value in self.y_ticks() {
             let at = self.spot(self.x[0], value);

@@ -19,6 +19,8 @@ use crate::units::Dimension;
 const MARGIN: f64 = 16.0;
 /// Distance of the rows of the table, px.
 const ROW: f64 = 22.0;
+/// Least distance of columns, px.
+const GAP: f64 = 8.0;
 /// Height of a heading, px.
 const HEADING: f64 = BODY + 22.0;
 
@@ -135,23 +137,31 @@ fn methods(column: &mut Column<'_>, subject: &Subject<'_>) {
     };
     let word = |basis: Basis| if joint.accepts(basis) { "accepted" } else { "information" }.to_owned();
     let middle = column.left + 0.64 * column.room();
-    let mut row = |label: &str, left: &str, right: &str, inks: [Ink; 2], size: f64| {
-        let y = column.y + 0.5 * ROW + 0.5 * font::CAPITALS * size;
-        column.canvas.text(&Text { size, ink: Ink::QUIET, ..Text::new(label, Spot::new(column.left, y)) });
-        for (words, x, ink) in [(left, middle, inks[0]), (right, column.right, inks[1])] {
+    let mut row = |label: &str, left: &str, right: &str, ink: Ink| {
+        let y = column.y + 0.5 * ROW + 0.5 * font::CAPITALS * SMALL;
+        let rooms = [(left, middle, 0.5 * column.room()), (right, column.right, column.right - middle - GAP)];
+        for (words, x, room) in rooms {
+            // A value is never cut; a long one is written smaller.
+            let size = SMALL * (room / font::width(words, SMALL).max(1.0)).min(1.0);
             column.canvas.text(&Text { size, ink, anchor: Anchor::End, ..Text::new(words, Spot::new(x, y)) });
         }
+        let room = middle - font::width(left, SMALL).min(0.5 * column.room()) - GAP - column.left;
+        let label = font::clipped(label, SMALL, room);
+        column.canvas.text(&Text {
+            size: SMALL,
+            ink: Ink::QUIET,
+            ..Text::new(&label, Spot::new(column.left, y))
+        });
         column.y += ROW;
     };
-    let plain = [Ink::TEXT, Ink::TEXT];
-    row("", "ultimate", "elastic", plain, SMALL);
-    row("under the rules", &word(Basis::Ultimate), &word(Basis::Elastic), [Ink::QUIET, Ink::QUIET], SMALL);
-    row("nominal strength", &resultant(nominal(ultimate)), &resultant(nominal(elastic)), plain, SMALL);
-    row("design strength", &resultant(design(ultimate)), &resultant(design(elastic)), plain, SMALL);
-    row("load factor", &number(nominal(ultimate)), &number(nominal(elastic)), plain, SMALL);
-    row("utilisation", &used(Basis::Ultimate, ultimate), &used(Basis::Elastic, elastic), plain, SMALL);
+    row("", "ultimate", "elastic", Ink::TEXT);
+    row("under the rules", &word(Basis::Ultimate), &word(Basis::Elastic), Ink::QUIET);
+    row("nominal strength", &resultant(nominal(ultimate)), &resultant(nominal(elastic)), Ink::TEXT);
+    row("design strength", &resultant(design(ultimate)), &resultant(design(elastic)), Ink::TEXT);
+    row("load factor", &number(nominal(ultimate)), &number(nominal(elastic)), Ink::TEXT);
+    row("utilisation", &used(Basis::Ultimate, ultimate), &used(Basis::Elastic, elastic), Ink::TEXT);
     if let Some(ratio) = case.ultimate_over_elastic() {
-        row("ultimate / elastic", &people(ratio), "", plain, SMALL);
+        row("ultimate / elastic", &people(ratio), "", Ink::TEXT);
     }
 }
 
