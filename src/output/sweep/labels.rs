@@ -7,13 +7,13 @@ use crate::study::sweep::{Sweep, Variable};
 const FINER: f64 = 0.1;
 
 /// The values of all variables as text, in the file's units.
-pub(super) struct Labels<'s> {
+pub(in crate::output) struct Labels<'s> {
     sweep: &'s Sweep,
     values: Vec<Vec<String>>,
 }
 
 impl<'s> Labels<'s> {
-    pub(super) fn new(sweep: &'s Sweep) -> Self {
+    pub(in crate::output) fn new(sweep: &'s Sweep) -> Self {
         let texts = |variable: &Variable| {
             let shown: Vec<f64> = variable.values.iter().map(|value| variable.shown(*value)).collect();
             graded(&shown, step(variable))
@@ -22,25 +22,25 @@ impl<'s> Labels<'s> {
     }
 
     /// All values of a variable, without unit.
-    pub(super) fn values(&self, variable: usize) -> &[String] {
+    pub(in crate::output) fn values(&self, variable: usize) -> &[String] {
         self.values.get(variable).map_or(&[], Vec::as_slice)
     }
 
     /// A value of a variable with its unit.
-    pub(super) fn value(&self, variable: usize, index: usize) -> String {
+    pub(in crate::output) fn value(&self, variable: usize, index: usize) -> String {
         let value = self.values(variable).get(index).map_or("", String::as_str);
         with_unit(value, &self.sweep.variables[variable])
     }
 
     /// A value between two points with its unit.
-    pub(super) fn between(&self, variable: usize, value: f64) -> String {
+    pub(in crate::output) fn between(&self, variable: usize, value: f64) -> String {
         let variable = &self.sweep.variables[variable];
         let shown = graded(&[variable.shown(value)], FINER * step(variable));
         with_unit(&shown.concat(), variable)
     }
 
     /// Where a point is: `arm = 150 mm, load.angle = 45 deg`.
-    pub(super) fn point(&self, point: usize) -> String {
+    pub(in crate::output) fn point(&self, point: usize) -> String {
         let indices = self.sweep.indices(point);
         let parts = self.sweep.variables.iter().zip(indices).enumerate();
         let parts: Vec<String> = parts
@@ -50,7 +50,7 @@ impl<'s> Labels<'s> {
     }
 
     /// What a variable runs through: `arm from 150 mm to 600 mm, 10 values; the file has 290 mm`.
-    pub(super) fn range(&self, variable: usize) -> String {
+    pub(in crate::output) fn range(&self, variable: usize) -> String {
         let last = self.values(variable).len().saturating_sub(1);
         let Variable { name, given, .. } = &self.sweep.variables[variable];
         let given =

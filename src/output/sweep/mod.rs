@@ -11,9 +11,9 @@ mod curve;
 #[cfg(test)]
 mod fixture;
 mod json;
-mod labels;
+pub(super) mod labels;
 mod matrix;
-mod summary;
+pub(super) mod summary;
 mod text;
 
 pub use csv::sweep_csv;

@@ -13,20 +13,13 @@ const MOST_CROSSINGS: usize = 6;
 /// Difference of two ratios that no table shows.
 const SAME_RATIO: f64 = 5e-4;
 
-/// The summary.
+/// The summary as a block of text.
 pub(super) fn text(sweep: &Sweep, labels: &Labels<'_>, layout: &Layout) -> String {
-    let mut sentences = Vec::new();
-    sentences.extend(crossings(&sweep.crossings(), labels));
-    sentences.extend(sweep.extremes().map(|extremes| self::extremes(extremes, labels)).unwrap_or_default());
-    sentences.extend(jumps(sweep, labels));
+    let mut sentences = sentences(sweep, labels);
     if sweep.variables.len() > 1 {
         // The table of a single variable says the same in its footnotes.
         sentences.extend(out_of_the_ordinary(sweep));
     }
-    if !sweep.joint.accepts(Basis::Ultimate) {
-        sentences.push(words::not_accepted(&sweep.joint));
-    }
-    sentences.extend(sweep.faults().iter().map(|found| no_joint(found, labels)));
     if sentences.is_empty() {
         return String::new();
     }
@@ -37,8 +30,21 @@ pub(super) fn text(sweep: &Sweep, labels: &Labels<'_>, layout: &Layout) -> Strin
     block
 }
 
+/// What the numbers say, sentence by sentence.
+pub(in crate::output) fn sentences(sweep: &Sweep, labels: &Labels<'_>) -> Vec<String> {
+    let mut sentences = Vec::new();
+    sentences.extend(crossings(&sweep.crossings(), labels));
+    sentences.extend(sweep.extremes().map(|extremes| self::extremes(extremes, labels)).unwrap_or_default());
+    sentences.extend(jumps(sweep, labels));
+    if !sweep.joint.accepts(Basis::Ultimate) {
+        sentences.push(words::not_accepted(&sweep.joint));
+    }
+    sentences.extend(sweep.faults().iter().map(|found| no_joint(found, labels)));
+    sentences
+}
+
 /// How many points have several states, lack one, or are governed by another case.
-fn out_of_the_ordinary(sweep: &Sweep) -> Vec<String> {
+pub(in crate::output) fn out_of_the_ordinary(sweep: &Sweep) -> Vec<String> {
     let mut sentences = Vec::new();
     sentences.extend(governed_by_others(sweep));
     let several = sweep.with_several_states();

@@ -10,7 +10,8 @@ use super::super::sheet;
 use super::notes;
 use super::plot::{Mark, Plot, range};
 use crate::analysis::Status;
-use crate::study::sweep::{Jump, PointCase, Sweep, Variable};
+use crate::model::Basis;
+use crate::study::sweep::{Jump, Point, PointCase, Sweep, Variable};
 use crate::units::UnitSystem;
 
 /// Size of the page, px.
@@ -30,22 +31,21 @@ const HEADROOM: f64 = 0.06;
 struct Quantity<'s> {
     sweep: &'s Sweep,
     variable: &'s Variable,
-    /// Of a case, in the unit of the axis.
-    value: &'s dyn Fn(&PointCase) -> Option<f64>,
+    /// At a point, in the unit of the axis.
+    value: &'s dyn Fn(&Point) -> Option<f64>,
     /// Whether it jumps with the ultimate strength.
     jumps: bool,
     /// On both sides of a jump, in the unit of the axis; `None` where it is known at the points alone.
     at_jump: &'s dyn Fn(&Jump, usize) -> Option<f64>,
     /// Whether a curve runs on between two neighbours.
-    joined: &'s dyn Fn(&PointCase, &PointCase) -> bool,
+    joined: &'s dyn Fn(&Point, &Point) -> bool,
 }
 
 impl Quantity<'_> {
     /// Points with their value, by index.
     fn points(&self) -> Vec<(usize, [f64; 2])> {
-        let of = |(index, point): (usize, &crate::study::sweep::Point)| {
-            let value = self.sweep.shown_case(point).and_then(|case| (self.value)(case))?;
-            Some((index, [self.variable.shown(point.values[0]), value]))
+        let of = |(index, point): (usize, &Point)| {
+            Some((index, [self.variable.shown(point.values[0]), (self.value)(point)?]))
         };
         self.sweep.points.iter().enumerate().filter_map(of).collect()
     }
@@ -77,8 +77,7 @@ impl Quantity<'_> {
     }
 
     fn runs_on(&self, one: usize, next: usize) -> bool {
-        let case = |index: usize| self.sweep.shown_case(&self.sweep.points[index]);
-        case(one).zip(case(next)).is_some_and(|(one, next)| (self.joined)(one, next))
+        (self.joined)(&self.sweep.points[one], &self.sweep.points[next])
     }
 
     fn draw(&self, canvas: &mut Canvas, plot: &Plot, ink: Ink, width: f64, mark: Option<Mark>) {
@@ -152,7 +151,7 @@ fn from_zero(values: &[f64]) -> [f64; 2] {
     range([0.0, if most > 0.0 { most * (1.0 + HEADROOM) } else { 1.0 }].into_iter())
 }
 
-fn always(_: &PointCase, _: &PointCase) -> bool {
+fn always(_: &Point, _: &Point) -> bool {
     true
 }
 
@@ -161,9 +160,13 @@ fn strength(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]
     let shown =
         |case: &PointCase, factor: f64| case.load_times(factor).map(|size| units.shown(dimension, size));
     let no_jump = |_: &Jump, _: usize| None;
-    let ultimate_value = |case: &PointCase| shown(case, case.ultimate?.load_factor);
-    let elastic_value = |case: &PointCase| shown(case, case.elastic?.load_factor);
-    let peak_value = |case: &PointCase| shown(case, case.peak_load_factor?);
+    let of = |point: &Point, factor: fn(&PointCase) -> Option<f64>| {
+        let case = sweep.shown_case(point)?;
+        shown(case, factor(case)?)
+    };
+    let ultimate_value = |point: &Point| of(point, |case| Some(case.ultimate?.load_factor));
+    let elastic_value = |point: &Point| of(point, |case| Some(case.elastic?.load_factor));
+    let peak_value = |point: &Point| of(point, |case| case.peak_load_factor);
     let side = |jump: &Jump, side: usize| Some(units.shown(dimension, jump.strength[side].size));
     let ultimate =
         Quantity { sweep, variable, value: &ultimate_value, jumps: true, at_jump: &side, joined: &always };
@@ -190,7 +193,7 @@ fn strength(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]
 }
 
 fn ratio(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
-    let value = |case: &PointCase| case.ultimate_over_elastic();
+    let value = |point: &Point| sweep.shown_case(point)?.ultimate_over_elastic();
     // Both sides of a jump are located for the ultimate strength alone.
     let no_jump = |_: &Jump, _: usize| None;
     let quantity =
@@ -204,16 +207,15 @@ fn ratio(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
 }
 
 fn utilisation(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
-    let value = PointCase::utilisation;
+    let value = |point: &Point| point.outcome.as_ref().ok()?.utilisation();
     let no_jump = |_: &Jump, _: usize| None;
-    let basis = |case: &PointCase| case.verification.as_ref().map(|verification| verification.basis);
-    let same_basis = |one: &PointCase, next: &PointCase| basis(one) == basis(next);
+    let same_basis = |one: &Point, next: &Point| deciding(one) == deciding(next);
     let quantity =
         Quantity { sweep, variable, value: &value, jumps: true, at_jump: &no_jump, joined: &same_basis };
     let values = quantity.values();
     let plot =
         Plot::new(area(2), x, from_zero(&[values.as_slice(), &[1.0]].concat())).in_units(&variable.unit, "");
-    plot.axes(canvas, Some(&notes::axis(variable)), "utilisation");
+    plot.axes(canvas, Some(&notes::axis(variable)), notes::utilisation(sweep));
     let limit = Stroke::dashed(Ink::EXCEEDED, 1.4, 7.0, 4.0);
     canvas.line(plot.spot(x[0], 1.0), plot.spot(x[1], 1.0), limit);
     let at = plot.spot(x[1], 1.0) + Spot::new(8.0, 0.5 * font::CAPITALS * SMALL);
@@ -221,11 +223,17 @@ fn utilisation(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64;
     quantity.draw(canvas, &plot, Ink::TEXT, 2.0, None);
     let points = quantity.points();
     for (index, [x, y]) in points.iter().filter(|_| points.len() <= MOST_MARKED) {
-        let holds =
-            sweep.shown_case(&sweep.points[*index]).is_some_and(|case| case.status == Status::Satisfied);
+        let holds = sweep.points[*index].status() == Status::Satisfied;
         let (mark, ink) = if holds { (Mark::Dot, Ink::TEXT) } else { (Mark::Ring, Ink::EXCEEDED) };
         mark.draw(canvas, plot.spot(*x, *y), ink);
     }
+}
+
+/// Which case decides a point, and by which analysis.
+fn deciding(point: &Point) -> Option<(usize, Basis)> {
+    let answer = point.outcome.as_ref().ok()?;
+    let governing = answer.governing?;
+    Some((governing, answer.cases.get(governing)?.verification.as_ref()?.basis))
 }
 
 /// Rings at both ends of a jump.
@@ -248,8 +256,7 @@ fn open_ends(
 /// A cross on the axis where a point has no answer.
 fn blanks(canvas: &mut Canvas, plot: &Plot, sweep: &Sweep, variable: &Variable) {
     for point in &sweep.points {
-        let answered = sweep.shown_case(point).is_some_and(|case| case.status != Status::NotSolved);
-        if !answered {
+        if point.status() == Status::NotSolved {
             let x = plot.spot(variable.shown(point.values[0]), 0.0).x;
             let at = Spot::new(x, plot.area.most.y);
             for across in [Spot::new(4.0, 4.0), Spot::new(4.0, -4.0)] {

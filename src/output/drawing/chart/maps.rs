@@ -12,11 +12,15 @@ use super::field::{Field, Place};
 use super::notes;
 use super::plot::{Plot, range, ticks};
 use crate::output::number::trimmed;
-use crate::study::sweep::{PointCase, Sweep, Variable};
+use crate::study::sweep::{Point, PointCase, Sweep, Variable};
 use std::collections::BTreeSet;
 
-/// Size of the page, px.
-const PAGE: (f64, f64) = (1200.0, 978.0);
+/// Width of the page, px; its height follows from the lines below the maps.
+const WIDTH: f64 = 1200.0;
+/// From the lower maps to the first line below them, px.
+const BELOW: f64 = 66.0;
+/// From the last line to the end of the page, px.
+const FOOT: f64 = 30.0;
 /// Left edges of the maps.
 const LEFT: [f64; 2] = [80.0, 676.0];
 /// Upper edges of the maps.
@@ -31,7 +35,7 @@ const LIMIT: f64 = 1.0;
 /// What a map shows.
 struct Map<'s> {
     title: String,
-    value: &'s dyn Fn(&PointCase) -> Option<f64>,
+    value: &'s dyn Fn(&Point) -> Option<f64>,
     /// Whether it jumps with the ultimate strength.
     jumps: bool,
     /// A level of its own, drawn strong.
@@ -40,16 +44,23 @@ struct Map<'s> {
 
 /// The page.
 pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
-    let mut canvas = Canvas::new(PAGE.0, PAGE.1);
+    let lines = notes::lines(sweep, WIDTH - 2.0 * sheet::MARGIN);
+    let below = TOP[1] + SIZE.1 + BELOW;
+    let height = below + font::LEADING * SMALL * as_float(lines.len()) + FOOT;
+    let mut canvas = Canvas::new(WIDTH, height);
     sheet::head(&mut canvas, None, &sweep.joint.title, &notes::subject(sweep));
     let (dimension, units) = (notes::measure(sweep), sweep.joint.units);
     let shown =
         |case: &PointCase, factor: f64| case.load_times(factor).map(|size| units.shown(dimension, size));
     let unit = units.symbol(dimension);
-    let ultimate = |case: &PointCase| shown(case, case.ultimate?.load_factor);
-    let elastic = |case: &PointCase| shown(case, case.elastic?.load_factor);
-    let ratio = |case: &PointCase| case.ultimate_over_elastic();
-    let utilisation = |case: &PointCase| case.utilisation();
+    let of = |point: &Point, factor: fn(&PointCase) -> Option<f64>| {
+        let case = sweep.shown_case(point)?;
+        shown(case, factor(case)?)
+    };
+    let ultimate = |point: &Point| of(point, |case| Some(case.ultimate?.load_factor));
+    let elastic = |point: &Point| of(point, |case| Some(case.elastic?.load_factor));
+    let ratio = |point: &Point| sweep.shown_case(point)?.ultimate_over_elastic();
+    let utilisation = |point: &Point| point.outcome.as_ref().ok()?.utilisation();
     let maps = [
         Map {
             title: format!("nominal ultimate strength, {unit}"),
@@ -64,7 +75,7 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
             limit: None,
         },
         Map { title: "ultimate / elastic".into(), value: &ratio, jumps: true, limit: None },
-        Map { title: "utilisation".into(), value: &utilisation, jumps: true, limit: Some(LIMIT) },
+        Map { title: notes::utilisation(sweep).into(), value: &utilisation, jumps: true, limit: Some(LIMIT) },
     ];
     let torn: BTreeSet<[usize; 2]> = sweep.jumps.iter().map(|jump| jump.points).collect();
     for (index, map) in maps.iter().enumerate() {
@@ -78,7 +89,7 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
         // Titles of the x axis only below the lower maps, those of the y axis only beside the left ones.
         draw(&mut canvas, sweep, [across, up], &torn, map, &plot);
     }
-    notes::below(&mut canvas, sweep, Spot::new(sheet::MARGIN, TOP[1] + SIZE.1 + 66.0));
+    canvas.lines(&lines, Spot::new(sheet::MARGIN, below), SMALL, Ink::TEXT);
     sheet::foot(&mut canvas);
     canvas
 }
@@ -93,9 +104,7 @@ fn draw(
 ) {
     // The first variable runs slowest.
     let index = |column: usize, row: usize| column * up.values.len() + row;
-    let value = |column: usize, row: usize| {
-        sweep.points.get(index(column, row)).and_then(|point| sweep.shown_case(point)).and_then(map.value)
-    };
+    let value = |column: usize, row: usize| sweep.points.get(index(column, row)).and_then(map.value);
     let is_torn =
         |[a, b]: [usize; 2], [c, d]: [usize; 2]| map.jumps && torn.contains(&[index(a, b), index(c, d)]);
     let field = Field::new(across.values.len(), up.values.len(), value, is_torn);

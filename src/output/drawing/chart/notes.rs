@@ -5,13 +5,12 @@ use super::super::font;
 use super::super::ink::Ink;
 use super::plot::Mark;
 use crate::analysis::Status;
-use crate::output::number::{people, quantity, trimmed};
+use crate::output::sweep::labels::Labels;
+use crate::output::sweep::summary;
 use crate::output::words;
 use crate::study::sweep::{PointCase, Sweep, Target, Variable};
 use crate::units::Dimension;
 
-/// Jumps told one by one.
-const JUMPS: usize = 3;
 /// Share by which the peak must exceed the ultimate strength to have a curve of its own in words.
 const NOTABLE_PEAK: f64 = 1e-3;
 
@@ -33,31 +32,16 @@ pub(super) fn axis(variable: &Variable) -> String {
     }
 }
 
-/// A value of a variable with its unit.
-fn value(variable: &Variable, inside: f64) -> String {
-    format!("{} {}", trimmed(variable.shown(inside)), variable.unit).trim_end().to_owned()
-}
-
-/// `name = value`, for all variables of a point.
-fn place(sweep: &Sweep, index: usize) -> String {
-    let Some(point) = sweep.points.get(index) else { return String::new() };
-    let each =
-        |(variable, inside): (&Variable, &f64)| format!("{} = {}", variable.name, value(variable, *inside));
-    sweep.variables.iter().zip(&point.values).map(each).collect::<Vec<_>>().join(", ")
-}
-
 /// What is varied, in one line.
 pub(super) fn subject(sweep: &Sweep) -> String {
-    let each = |variable: &Variable| {
-        format!(
-            "{} from {} to {}",
-            name(variable),
-            value(variable, variable.from()),
-            value(variable, variable.to())
-        )
-    };
-    let varied: Vec<String> = sweep.variables.iter().map(each).collect();
-    format!("Case {}: {}, {} points", sweep.shown_name(), varied.join(" and "), sweep.points.len())
+    let labels = Labels::new(sweep);
+    let varied: Vec<String> = (0..sweep.variables.len()).map(|variable| labels.range(variable)).collect();
+    format!("Case {}: {}", sweep.shown_name(), varied.join(" and "))
+}
+
+/// What the utilisation is of: the governing case of a joint may be another than the one shown.
+pub(super) fn utilisation(sweep: &Sweep) -> &'static str {
+    if sweep.cases.len() > 1 { "utilisation of the joint, governing case" } else { "utilisation" }
 }
 
 /// Whether the load of the shown case is a force or a moment.
@@ -76,54 +60,25 @@ pub(super) fn peak_differs(sweep: &Sweep) -> bool {
     sweep.points.iter().filter_map(|point| sweep.shown_case(point)).any(exceeds)
 }
 
-/// What a reader should take from the drawing.
-pub(super) fn sentences(sweep: &Sweep) -> Vec<String> {
-    let mut sentences = Vec::new();
-    if let Some(extremes) = sweep.extremes() {
-        let (largest, ratio) = extremes.largest;
-        sentences.push(format!(
-            "The elastic method loses most at {}: ultimate / elastic {}.",
-            place(sweep, largest),
-            people(ratio)
-        ));
-        let (smallest, ratio) = extremes.smallest;
-        let words =
-            if ratio < 1.0 { "The elastic strength is the greater at" } else { "The methods are closest at" };
-        sentences.push(format!("{words} {}: ultimate / elastic {}.", place(sweep, smallest), people(ratio)));
-    }
-    for crossing in sweep.crossings() {
-        let [before, after] = crossing.points.map(|index| place(sweep, index));
-        sentences.push(format!("The verdict changes between {before} and {after}."));
-    }
-    let units = sweep.joint.units;
-    let dimension = measure(sweep);
-    for jump in sweep.jumps.iter().take(if sweep.variables.len() == 1 { JUMPS } else { 0 }) {
-        let [from, to] = jump.strength.map(|strength| quantity(units, dimension, strength.size));
-        let at = sweep
-            .variables
-            .get(jump.variable)
-            .map_or_else(String::new, |variable| value(variable, jump.at[0]));
-        sentences.push(format!("The ultimate strength jumps at {at}: {from} to {to}."));
-    }
-    let untold =
-        if sweep.variables.len() == 1 { sweep.jumps.len().saturating_sub(JUMPS) } else { sweep.jumps.len() };
-    if untold > 0 {
-        let noun = if untold == 1 { "jump" } else { "jumps" };
-        sentences.push(format!(
-            "{untold} {noun} of the ultimate strength between neighbouring points: steps in the drawing."
-        ));
-    }
-    let unanswered = sweep.count(Status::NotSolved);
-    if unanswered > 0 {
-        let noun = if unanswered == 1 { "point has" } else { "points have" };
-        sentences.push(format!("{unanswered} {noun} no answer."));
-    }
+/// What a reader should take from the drawing: the verdicts, and what the numbers say.
+fn sentences(sweep: &Sweep) -> Vec<String> {
+    let count = |status: Status, words: &str| {
+        let count = sweep.count(status);
+        (count > 0).then(|| format!("{count} {words}"))
+    };
+    let counts = [
+        count(Status::Satisfied, "satisfied"),
+        count(Status::Exceeded, "exceeded"),
+        count(Status::NotSolved, "without an answer"),
+    ];
+    let counts: Vec<String> = counts.into_iter().flatten().collect();
+    let mut sentences = vec![
+        format!("{}; {}", sweep.joint.rules.id, words::law_in_brief(&sweep.joint)),
+        format!("{} points: {}.", sweep.points.len(), counts.join(", ")),
+    ];
+    sentences.extend(summary::sentences(sweep, &Labels::new(sweep)));
+    sentences.extend(summary::out_of_the_ordinary(sweep));
     sentences
-}
-
-/// Rules and law.
-fn basis(sweep: &Sweep) -> String {
-    format!("{}; {}", sweep.joint.rules.id, words::law_in_brief(&sweep.joint))
 }
 
 /// The panel beside curves.
@@ -159,7 +114,7 @@ pub(super) fn draw(canvas: &mut Canvas, panel: &Area, sweep: &Sweep) {
     key("utilisation, satisfied", &|canvas, at| Mark::Dot.draw(canvas, at, Ink::TEXT));
     key("utilisation, exceeded", &|canvas, at| Mark::Ring.draw(canvas, at, Ink::EXCEEDED));
     y = heading(canvas, "What it shows", left, right, y);
-    for sentence in sentences(sweep).iter().chain([&basis(sweep)]) {
+    for sentence in &sentences(sweep) {
         let lines = font::lines(sentence, SMALL, right - left);
         if y + font::LEADING * SMALL * super::super::ink::as_float(lines.len()) > panel.most.y - 8.0 {
             break;
@@ -179,15 +134,7 @@ fn heading(canvas: &mut Canvas, words: &str, left: f64, right: f64, y: f64) -> f
     y + BODY + 13.0
 }
 
-/// The sentences below maps.
-pub(super) fn below(canvas: &mut Canvas, sweep: &Sweep, at: Spot) {
-    let right = canvas.page().most.x - at.x;
-    let mut y = at.y;
-    for sentence in sentences(sweep).iter().chain([&basis(sweep)]) {
-        let lines = font::lines(sentence, SMALL, right - at.x);
-        if y > canvas.page().most.y - 44.0 {
-            break;
-        }
-        y = canvas.lines(&lines, Spot::new(at.x, y), SMALL, Ink::TEXT);
-    }
+/// The lines below maps.
+pub(super) fn lines(sweep: &Sweep, room: f64) -> Vec<String> {
+    sentences(sweep).iter().flat_map(|sentence| font::lines(sentence, SMALL, room)).collect()
 }
