@@ -6,6 +6,7 @@
 //!        -> elements_csv   one row per element of weld                   csv/elements.rs
 //!        -> summary_csv    one row per case                              csv/summary.rs
 //! RuleSet, Law -> rules_text, rules_json                                 rules.rs
+//! SelfCheck -> selfcheck_text, selfcheck_csv, selfcheck_json             selfcheck/
 //! ```
 //!
 //! Writers compute nothing: they ask the report. Rounding and unit text are in `number.rs` alone.
@@ -18,6 +19,7 @@ mod layout;
 mod names;
 mod number;
 mod rules;
+mod selfcheck;
 mod table;
 mod text;
 
@@ -25,4 +27,5 @@ pub use csv::{elements_csv, summary_csv};
 pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
 pub use rules::{law_text, rule_set_text, rules_json, rules_text};
+pub use selfcheck::{selfcheck_csv, selfcheck_json, selfcheck_text};
 pub use text::check_text;

@@ -18,12 +18,12 @@ use crate::analysis::Report;
 use crate::units::{Dimension, UnitSystem};
 
 /// A field for a number that may be missing.
-fn field(value: Option<f64>) -> String {
+pub(super) fn field(value: Option<f64>) -> String {
     value.map(machine).unwrap_or_default()
 }
 
 /// The unit as it stands in a column title: `kN_m`, `kip_per_in`.
-fn unit_suffix(units: UnitSystem, dimension: Dimension) -> String {
+pub(super) fn unit_suffix(units: UnitSystem, dimension: Dimension) -> String {
     units.symbol(dimension).replace('/', "_per_").replace(' ', "_")
 }
 
@@ -44,11 +44,11 @@ fn joint_labels(reports: &[Report]) -> Vec<String> {
 }
 
 /// Rows of equal length as text.
-fn to_text<const COLUMNS: usize>(rows: Vec<[String; COLUMNS]>) -> String {
+pub(super) fn to_text<R: AsRef<[String]>>(rows: Vec<R>) -> String {
     let mut writer =
         ::csv::WriterBuilder::new().terminator(::csv::Terminator::CRLF).from_writer(Vec::<u8>::new());
     for row in rows {
-        writer.write_record(&row).expect("rows are equally long and memory accepts every write");
+        writer.write_record(row.as_ref()).expect("rows are equally long and memory accepts every write");
     }
     let bytes = writer.into_inner().expect("memory accepts every write");
     String::from_utf8(bytes).expect("text fields, commas, quotes and line breaks are UTF-8")

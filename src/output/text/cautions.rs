@@ -18,7 +18,7 @@ const DEFERENCE: &str = "These results support, and do not replace, the judgemen
                          working under the code in force where the structure stands.";
 
 /// The closing block.
-pub(super) fn text(layout: &Layout) -> String {
+pub(in crate::output) fn text(layout: &Layout) -> String {
     let mut block = (layout.paint)(Emphasis::Heading, "Limits of this calculation") + "\n";
     for caution in CAUTIONS {
         block.push_str(&hanging("  - ", caution, layout.columns()));

@@ -5,7 +5,7 @@
 
 mod case;
 mod cases;
-mod cautions;
+pub(super) mod cautions;
 mod joint;
 mod words;
 
