@@ -1,7 +1,7 @@
 //! The command line: reads files, asks the library, writes what comes back, and sets the exit status.
 //!
 //! ```text
-//! args.rs -> check.rs | rules.rs | starter.rs      one file per command
+//! args.rs -> check.rs | rules.rs | selfcheck.rs | starter.rs      one file per command
 //!            source.rs       where text is read from
 //!            destination.rs  where results are written, whole or not at all
 //!            message.rs      everything that goes to standard error
@@ -17,6 +17,7 @@ mod destination;
 mod exit;
 mod message;
 mod rules;
+mod selfcheck;
 mod source;
 mod starter;
 
@@ -42,6 +43,7 @@ pub(crate) fn run(arguments: impl Iterator<Item = OsString>) -> ExitCode {
     match arguments.command {
         Command::Check(arguments) => check::run(&arguments),
         Command::Rules(arguments) => rules::run(&arguments),
+        Command::SelfCheck(arguments) => selfcheck::run(&arguments),
         Command::New(arguments) => starter::run(&arguments),
     }
     .into()
