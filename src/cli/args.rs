@@ -22,9 +22,19 @@ Examples:
   weldpole sweep --demo --vary arm=150mm:600mm:10
                                         strength while a parameter varies
   weldpole rules                        list the rule sets and laws
+  weldpole selfcheck                    compare the program with published values
 
 Exit status: 0 every verification satisfied; 1 some verification exceeded or rule of detailing
 broken; 2 no answer for at least one joint. 2 outweighs 1, 1 outweighs 0.";
+
+const SELFCHECK_EXAMPLES: &str = "\
+Examples:
+  weldpole selfcheck
+  weldpole selfcheck -o selfcheck.txt          the page for a quality file
+  weldpole selfcheck --format csv -o selfcheck.csv
+
+Exit status: 0 every published value met within its tolerance; 1 some value not met; 2 the results
+cannot be written.";
 
 const CHECK_EXAMPLES: &str = "\
 Examples:
@@ -70,6 +80,9 @@ pub(super) enum Command {
     Sweep(SweepArguments),
     /// List rule sets and load-deformation laws, or show one with its clauses and sources
     Rules(RulesArguments),
+    /// Compute the published cases held by the program again and compare
+    #[command(name = "selfcheck", after_help = SELFCHECK_EXAMPLES)]
+    SelfCheck(SelfCheckArguments),
     /// Write a commented starter file
     New(NewArguments),
 }
@@ -194,6 +207,20 @@ pub(super) struct RulesArguments {
     pub(super) width: Option<u16>,
 }
 
+/// Arguments of `selfcheck`.
+#[derive(Debug, Args)]
+pub(super) struct SelfCheckArguments {
+    /// Form of the results
+    #[arg(long, value_enum, default_value_t = SelfCheckFormat::Text)]
+    pub(super) format: SelfCheckFormat,
+    /// Write to FILE instead of standard output; `-` is standard output
+    #[arg(short, long, value_name = "FILE")]
+    pub(super) output: Option<PathBuf>,
+    /// Columns of the text, at least 72 [default: the variable COLUMNS, else 80]
+    #[arg(long, value_name = "N", value_parser = clap::value_parser!(u16).range(1..=1000))]
+    pub(super) width: Option<u16>,
+}
+
 /// Arguments of `new`.
 #[derive(Debug, Args)]
 pub(super) struct NewArguments {
@@ -237,6 +264,17 @@ pub(super) enum RulesFormat {
     Text,
     /// For programs
     Json,
+}
+
+/// Form of the results of `selfcheck`.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(super) enum SelfCheckFormat {
+    /// For people
+    Text,
+    /// For programs: schema weldpole.selfcheck/1
+    Json,
+    /// For spreadsheets: one row per published value
+    Csv,
 }
 
 /// `NAME=VALUE`.

@@ -8,7 +8,7 @@ use weldpole::analysis::Status;
 pub(super) enum Exit {
     /// Every verification satisfied.
     Satisfied,
-    /// Some verification exceeded, or a rule of detailing broken.
+    /// Some verification exceeded, a rule of detailing broken, or a published value not met.
     Exceeded,
     /// No answer for at least one joint, or an answer that could not be written.
     NoAnswer,

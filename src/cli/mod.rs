@@ -1,7 +1,7 @@
 //! The command line: reads files, asks the library, writes what comes back, and sets the exit status.
 //!
 //! ```text
-//! args.rs -> check.rs | sweep.rs | rules.rs | starter.rs    one file per command
+//! args.rs -> check.rs | sweep.rs | selfcheck.rs | rules.rs | starter.rs    one file per command
 //!            source.rs       where text is read from
 //!            destination.rs  where results are written, whole or not at all
 //!            message.rs      everything that goes to standard error, but
@@ -20,6 +20,7 @@ mod figure;
 mod message;
 mod progress;
 mod rules;
+mod selfcheck;
 mod source;
 mod starter;
 mod sweep;
@@ -47,6 +48,7 @@ pub(crate) fn run(arguments: impl Iterator<Item = OsString>) -> ExitCode {
         Command::Check(arguments) => check::run(&arguments),
         Command::Sweep(arguments) => sweep::run(&arguments),
         Command::Rules(arguments) => rules::run(&arguments),
+        Command::SelfCheck(arguments) => selfcheck::run(&arguments),
         Command::New(arguments) => starter::run(&arguments),
     }
     .into()

@@ -15,7 +15,7 @@ pub(super) fn run(arguments: &RulesArguments) -> Exit {
     let destination = Destination::from(arguments.output.as_ref());
     let layout = colour::layout(arguments.width, false, &destination);
     let outcome = chosen(arguments.id.as_deref()).and_then(|(sets, laws)| match arguments.format {
-        RulesFormat::Json => destination.write(&rules_json(VERSION, sets, laws)),
+        RulesFormat::Json => destination.write(rules_json(VERSION, sets, laws)),
         RulesFormat::Text => destination.write_text(&text(arguments.id.is_some(), sets, laws, &layout)),
     });
     match outcome {

@@ -7,6 +7,7 @@
 //!        -> summary_csv    one row per case                              csv/summary.rs
 //! Sweep  -> sweep_text, sweep_csv, sweep_json                                 sweep/
 //! RuleSet, Law -> rules_text, rules_json                                 rules.rs
+//! SelfCheck -> selfcheck_text, selfcheck_csv, selfcheck_json             selfcheck/
 //! ```
 //!
 //! Writers compute nothing: they ask the report. Rounding and unit text are in `number.rs` alone.
@@ -20,6 +21,7 @@ mod layout;
 mod names;
 mod number;
 mod rules;
+mod selfcheck;
 mod sweep;
 mod table;
 mod text;
@@ -32,5 +34,6 @@ pub use drawing::{joint_svg, sweep_svg};
 pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
 pub use rules::{law_text, rule_set_text, rules_json, rules_text};
+pub use selfcheck::{selfcheck_csv, selfcheck_json, selfcheck_text};
 pub use sweep::{sweep_csv, sweep_json, sweep_text};
 pub use text::check_text;

@@ -5,6 +5,8 @@
 //! | machines | 12 significant, nearest | [`rounded`], [`machine`] |
 //! | machines, utilisation | 12 significant, upward | [`rounded_up`] |
 //! | people | 4 significant, in the file's units | [`people`], [`quantity`], [`point`] |
+//! | people, beside a printed number | decimals of the caller's choice, nearest | [`fixed`] |
+//! | people, tolerance | 4 significant, as percents | [`share`] |
 //! | people, utilisation | 3 decimals, upward | [`utilisation`] |
 //! | drawings, coordinates | hundredths of a px | [`coordinate`] |
 //!
@@ -108,6 +110,21 @@ pub(super) fn utilisation(value: f64, exceeded: bool) -> String {
 /// A share as percents with one decimal.
 pub(super) fn percent(share: f64) -> String {
     format!("{:.1} %", (share * 100.0).abs())
+}
+
+/// A number with a given count of decimals, to stand beside another.
+pub(super) fn fixed(value: f64, decimals: usize) -> String {
+    if value.is_finite() { format!("{:.decimals$}", value + 0.0) } else { MISSING.to_owned() }
+}
+
+/// A count that need not be whole.
+pub(super) fn count(value: f64) -> String {
+    trimmed(value)
+}
+
+/// A share as percents of up to four figures; a very small one as it is.
+pub(super) fn share(share: f64) -> String {
+    if share < 1e-5 { format!("{share:e}") } else { format!("{} %", trimmed(share * 100.0)) }
 }
 
 /// A residual or error: two figures.
@@ -224,6 +241,14 @@ mod tests {
         assert_eq!(people(1.5e9), "1.500e9");
         assert_eq!(people(0.000_001_234), "1.234e-6");
         assert_eq!(people(-0.0), "0");
+    }
+
+    #[test]
+    fn tolerances_keep_their_figures() {
+        assert_eq!([share(0.006), share(0.006_819_812_3), share(2e-7)], ["0.6 %", "0.682 %", "2e-7"]);
+        assert_eq!([count(0.500_000_001), count(1.207_106_8)], ["0.5", "1.207"]);
+        assert_eq!([fixed(1.871_86, 3), fixed(333.333, 1), fixed(-0.0, 1)], ["1.872", "333.3", "0.0"]);
+        assert_eq!(fixed(f64::NAN, 2), "-");
     }
 
     #[test]

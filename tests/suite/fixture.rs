@@ -3,10 +3,7 @@
 use std::f64::consts::{FRAC_PI_2, TAU};
 use weldpole::input::catalog;
 use weldpole::mechanics::{PlaneGroup, Triple};
-use weldpole::model::{
-    Discretisation, Document, Filler, FilletSize, Joint, RuleSet, Run, Vector, Weld, WeldGroup,
-};
-use weldpole::units::UnitSystem;
+use weldpole::model::{Discretisation, Filler, FilletSize, Run, Vector, Weld, WeldGroup};
 
 pub fn at(x: f64, y: f64) -> Vector {
     Vector::new(x, y, 0.0)
@@ -33,25 +30,6 @@ pub fn group(runs: Vec<Run>, leg: f64) -> WeldGroup {
     let welds =
         runs.into_iter().enumerate().map(|(index, run)| weld(&format!("w{index}"), run, leg)).collect();
     WeldGroup::new(welds).unwrap()
-}
-
-/// A joint of these welds under a rule set, with its default law and no case.
-pub fn joint(group: WeldGroup, rules: &RuleSet) -> Joint {
-    Joint {
-        file: "test".into(),
-        title: "test".into(),
-        units: UnitSystem::Metric,
-        rules: rules.clone(),
-        law: catalog::law(&rules.law).unwrap().clone(),
-        discretisation: Discretisation::Continuous,
-        filler: None,
-        plates: Vec::new(),
-        group,
-        cases: Vec::new(),
-        combined: false,
-        unused_cases: Vec::new(),
-        document: Document::default(),
-    }
 }
 
 pub fn plane(group: &WeldGroup) -> PlaneGroup {

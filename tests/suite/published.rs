@@ -3,19 +3,14 @@
 //! Expected values labelled *published* stand in that file with document and page; *independent* ones come from
 //! another program (`tests/reference`), or from a formula written out here; *pinned* are our own earlier output.
 
-use crate::fixture::{at, group, joint, straight};
+use crate::fixture::{at, group, straight};
 use crate::shapes::{self, HANDBOOK_KIP_PER_INCH, KIP_PER_INCH};
-use serde::Deserialize;
-use std::f64::consts::FRAC_PI_2;
+use std::sync::OnceLock;
+use weldpole::analysis::analyse;
 use weldpole::input::{Options, catalog, read_joint};
-use weldpole::mechanics::{PlaneGroup, Section};
-use weldpole::model::{
-    Basis, Discretisation, Filler, FilletSize, Law, RuleSet, Vector, Weld, WeldGroup, Wrench,
-};
-use weldpole::solvers::{Elastic, elastic};
-use weldpole::verify::concentric_checks;
-
-const CASES: &str = include_str!("../../data/cases/plane-groups-published.csv");
+use weldpole::mechanics::PlaneGroup;
+use weldpole::model::{Basis, Discretisation, Law, Vector, WeldGroup, Wrench};
+use weldpole::study::selfcheck::{self, Method, Outcome, Quantity, Reading, SelfCheck};
 
 /// Tables print three digits (up to 0.5 % for 1.00) of a calculation with some tens of elements, -0.3 to +0.5 %.
 const TABLE: f64 = 0.006;
@@ -32,105 +27,114 @@ const ELEMENTS: usize = 120;
 /// come from calculations with other elements; the continuous weld misses more.
 const AGREEING: usize = 117;
 
-#[derive(Debug, Clone, Deserialize)]
-struct Row {
-    id: String,
-    method: String,
-    shape: String,
-    k: f64,
-    a: f64,
-    length: Option<f64>,
-    load_angle_deg: f64,
-    quantity: String,
-    published: String,
-    reading: String,
-    source: String,
-    #[serde(rename = "where")]
-    place: String,
+/// Two solvers' tolerances, and the rounding of lengths and strengths.
+const SAME_NUMBER: f64 = 1e-8;
+
+/// The self-check of the program, run once: what `weldpole selfcheck` prints.
+fn check() -> &'static SelfCheck {
+    static CHECK: OnceLock<SelfCheck> = OnceLock::new();
+    CHECK.get_or_init(selfcheck::run)
 }
 
-impl Row {
-    fn value(&self) -> f64 {
-        self.published.parse().unwrap()
-    }
-
-    /// One unit of the last printed digit.
-    fn unit(&self) -> f64 {
-        let decimals = self.published.split_once('.').map_or(0, |(_, digits)| digits.len());
-        10.0_f64.powi(-(decimals as i32))
-    }
-
-    /// What the printed number is of C.
-    fn share(&self) -> f64 {
-        match self.quantity.as_str() {
-            "C" => 1.0,
-            "0.75 C" => 0.75,
-            other => panic!("{}: {other} is no coefficient", self.id),
-        }
-    }
+fn outcomes(method: Method) -> impl Iterator<Item = &'static Outcome> {
+    check().outcomes.iter().filter(move |outcome| outcome.case.method == method)
 }
 
-fn rows(method: &str) -> Vec<Row> {
-    let mut reader = csv::Reader::from_reader(CASES.as_bytes());
-    reader.deserialize().map(Result::unwrap).filter(|row: &Row| row.method == method).collect()
+fn computed(outcome: &Outcome) -> f64 {
+    *outcome.computed.as_ref().unwrap_or_else(|reason| panic!("{}: {reason}", outcome.case.id))
+}
+
+/// What the printed number is of C.
+fn share(outcome: &Outcome) -> f64 {
+    if outcome.case.quantity == Quantity::DesignCoefficient { 0.75 } else { 1.0 }
 }
 
 fn law() -> &'static Law {
     catalog::law("lesik-kennedy").unwrap()
 }
 
-fn aisc() -> &'static RuleSet {
-    catalog::rule_set("aisc-360-22-lrfd").unwrap()
+/// C of a row by a group of other size, leg and filler, through the solver alone.
+fn coefficients(outcome: &Outcome, discretisation: Discretisation) -> Vec<f64> {
+    let case = &outcome.case;
+    let states =
+        shapes::coefficients(case.shape.name(), case.k, case.a, case.load_angle_deg, law(), discretisation);
+    states.iter().map(|state| share(outcome) * state).collect()
 }
 
-fn by_elements(row: &Row) -> f64 {
-    let elements = Discretisation::Elements(ELEMENTS);
-    row.share() * shapes::coefficients(&row.shape, row.k, row.a, row.load_angle_deg, law(), elements)[0]
+/// Asserts a value against the printed one to half a unit of its last digit.
+fn to_the_digit(outcome: &Outcome, own: f64) {
+    let printed = &outcome.case.expected;
+    let difference = (own - printed.value).abs();
+    assert!(
+        difference <= HALF_A_UNIT * printed.last_digit(),
+        "{}: {own} against {}",
+        outcome.case.id,
+        printed.text
+    );
 }
 
 #[test]
 fn every_row_belongs_to_a_method_and_cites() {
-    let counts = ["instantaneous-centre", "concentric", "elastic"].map(|method| {
-        let rows = rows(method);
-        for row in &rows {
-            assert!(!row.source.is_empty() && !row.place.is_empty(), "{}", row.id);
+    let counts = [Method::InstantaneousCentre, Method::Concentric, Method::Elastic].map(|method| {
+        for outcome in outcomes(method) {
+            let case = &outcome.case;
+            assert!(!case.source.is_empty() && !case.place.is_empty(), "{}", case.id);
         }
-        rows.len()
+        outcomes(method).count()
     });
     assert_eq!(counts, [136, 15, 8]);
-    assert_eq!(CASES.lines().count(), 1 + counts.iter().sum::<usize>());
+    assert_eq!(check().outcomes.len(), counts.iter().sum::<usize>());
+    assert_eq!(catalog::PUBLISHED_CASES.lines().count(), 1 + check().outcomes.len());
+}
+
+#[test]
+fn the_self_check_passes_and_is_no_looser_than_the_tolerances_of_this_file() {
+    assert!(check().passed(), "{:?}", check().failures().map(|outcome| &outcome.case.id).collect::<Vec<_>>());
+    for outcome in &check().outcomes {
+        let (case, printed) = (&outcome.case, &outcome.case.expected);
+        let digit = HALF_A_UNIT * printed.last_digit();
+        let allowed = match (case.method, case.quantity) {
+            (Method::InstantaneousCentre, _) if case.reading == Reading::Interpolated => {
+                EXAMPLE * printed.value
+            }
+            (Method::InstantaneousCentre, _) => TABLE * printed.value,
+            (Method::Elastic, Quantity::LineForce) => resultant_rounding(),
+            (Method::Elastic, Quantity::LoadLrfd | Quantity::LoadAsd) => {
+                resultant_rounding() / 0.177 * printed.value
+            }
+            (Method::Elastic, Quantity::Throat) => SEVEN_DIGITS * printed.value,
+            (Method::Concentric | Method::Elastic, _) => digit,
+        };
+        assert!(outcome.allowed() <= allowed * (1.0 + 1e-12), "{}: {}", case.id, outcome.allowed());
+        assert!(!outcome.tolerance.why.is_empty(), "{}", case.id);
+    }
+}
+
+#[test]
+fn the_remarks_of_the_self_check_are_true() {
+    // Its page says that every load runs along or across the welds.
+    assert!(check().outcomes.iter().all(|outcome| outcome.case.load_angle_deg == 0.0));
+    assert!(check().remarks.iter().any(|remark| remark.contains("not with physical tests")));
 }
 
 #[test]
 fn instantaneous_centre_rows() {
     // Published: the file's rows.
-    let mut worst: Vec<(String, f64, f64)> = Vec::new();
-    for row in rows("instantaneous-centre") {
-        let states = shapes::coefficients(
-            &row.shape,
-            row.k,
-            row.a,
-            row.load_angle_deg,
-            law(),
-            Discretisation::Continuous,
-        );
-        // Loads across the welds or well beside them have one state: what the elements test relies on.
-        assert_eq!(states.len(), 1, "{}: {states:?}", row.id);
-        let own = row.share() * states[0];
-        let difference = own / row.value() - 1.0;
-        let tolerance = if row.reading == "interpolated" { EXAMPLE } else { TABLE };
-        assert!(difference.abs() <= tolerance, "{}: {own} against {}", row.id, row.published);
-        let source = row.id.split(['-', '_']).take(2).collect::<Vec<_>>().join("-");
-        let source = if source.starts_with("T8-38m") {
-            "T8-38m"
-        } else if source.starts_with("T8") {
-            "T8-8"
-        } else {
-            "DE16"
-        };
-        match worst.iter_mut().find(|(name, ..)| name == source) {
+    let mut worst: Vec<(&str, f64, f64)> = Vec::new();
+    for outcome in outcomes(Method::InstantaneousCentre) {
+        let case = &outcome.case;
+        let own = computed(outcome);
+        let difference = own / case.expected.value - 1.0;
+        let tolerance = if case.reading == Reading::Interpolated { EXAMPLE } else { TABLE };
+        assert!(difference.abs() <= tolerance, "{}: {own} against {}", case.id, case.expected.text);
+        // Loads across the welds or well beside them have one state: what the elements test relies on. It is that
+        // of a group of another size, leg and filler.
+        let states = coefficients(outcome, Discretisation::Continuous);
+        assert_eq!(states.len(), 1, "{}: {states:?}", case.id);
+        assert!((states[0] / own - 1.0).abs() <= SAME_NUMBER, "{}: {own} and {states:?}", case.id);
+        match worst.iter_mut().find(|(source, ..)| *source == case.source) {
             Some((_, low, high)) => (*low, *high) = (low.min(difference), high.max(difference)),
-            None => worst.push((source.into(), difference, difference)),
+            None => worst.push((&case.source, difference, difference)),
         }
     }
     for (source, low, high) in worst {
@@ -145,101 +149,82 @@ fn instantaneous_centre_rows() {
 #[test]
 fn last_printed_digits_by_elements() {
     // Published: the table rows (worked examples interpolate, so their digits say nothing).
-    let rows: Vec<Row> =
-        rows("instantaneous-centre").into_iter().filter(|row| row.reading != "interpolated").collect();
-    let agrees = |row: &&Row| {
-        let own = by_elements(row) / KIP_PER_INCH * HANDBOOK_KIP_PER_INCH;
-        let agrees = (own - row.value()).abs() <= HALF_A_UNIT * row.unit();
+    let rows: Vec<&Outcome> = outcomes(Method::InstantaneousCentre)
+        .filter(|outcome| outcome.case.reading != Reading::Interpolated)
+        .collect();
+    let agrees = |outcome: &&&Outcome| {
+        let printed = &outcome.case.expected;
+        let by_elements = coefficients(outcome, Discretisation::Elements(ELEMENTS))[0];
+        let own = by_elements / KIP_PER_INCH * HANDBOOK_KIP_PER_INCH;
+        let agrees = (own - printed.value).abs() <= HALF_A_UNIT * printed.last_digit();
         if !agrees {
-            println!("{}: {own:.5} with {ELEMENTS} elements, printed {}", row.id, row.published);
+            println!("{}: {own:.5} with {ELEMENTS} elements, printed {}", outcome.case.id, printed.text);
         }
         agrees
     };
     let count = rows.iter().filter(agrees).count();
     println!("{count} of {} table values agree to the last printed digit", rows.len());
+    assert_eq!(rows.len(), 131);
     assert!(count >= AGREEING, "{count} of {}", rows.len());
 }
 
 #[test]
 fn concentric_rows_by_the_rules_of_j2_4() {
     // Published: the file's rows; the rule is exact, so every printed digit must come out (with the constant of
-    // the handbook, see there).
-    for row in rows("concentric") {
-        let welds = group(shapes::runs(&row.shape, row.k, shapes::LENGTH), shapes::LEG);
-        let load = shapes::load(&welds, 0.0, shapes::LENGTH, row.load_angle_deg, 1000.0);
-        let load = load.about(Section::of(&welds).centroid);
-        let checks = concentric_checks(&joint(welds.clone(), aisc()), &load);
-        assert_eq!(checks.len(), 1, "{}", row.id);
-        let weld = &welds.welds()[0];
-        let per_length = 0.60 * weld.filler.strength * weld.size.throat() * shapes::LENGTH;
-        let own = row.share() * HANDBOOK_KIP_PER_INCH * 1000.0 * checks[0].load_factor / per_length;
-        assert!(
-            (own - row.value()).abs() <= HALF_A_UNIT * row.unit(),
-            "{}: {own} against {}",
-            row.id,
-            row.published
-        );
+    // the handbook, see there). Independent: the rule written out for a vertical and two horizontals.
+    for outcome in outcomes(Method::Concentric) {
+        let (own, k) = (computed(outcome), outcome.case.k);
+        to_the_digit(outcome, own);
+        let rule = f64::max(1.0 + 2.0 * k, 0.85 + 1.5 * 2.0 * k);
+        assert!((own / (HANDBOOK_KIP_PER_INCH * rule) - 1.0).abs() < 1e-12, "{}: {own}", outcome.case.id);
     }
 }
 
-/// A group of unit throat and unit longitudinal strength, and its elastic answer to a unit force in N.
-fn elastic_of(row: &Row) -> (Section, Elastic) {
-    let l = row.length.unwrap();
-    let weld = Weld {
-        name: "w".into(),
-        runs: shapes::runs(&row.shape, row.k, l),
-        size: FilletSize::from_throat(1.0, FRAC_PI_2).unwrap(),
-        filler: Filler::new(None, 1.0).unwrap(),
-        sides: 1,
-        plates: vec![],
-        set: None,
-    };
-    let welds = WeldGroup::new(vec![weld]).unwrap();
-    let plane = PlaneGroup::new(&welds, law(), 1.0, Discretisation::Continuous);
-    let load = shapes::load(&welds, row.a, l, row.load_angle_deg, 1.0);
-    (Section::of(&welds), elastic(&plane, &welds, 1.0, &plane.triple(&load)).unwrap())
+/// Two rounded components and their rounded resultant: off by at most (sqrt 2 + 1) / 2 of 0.001.
+fn resultant_rounding() -> f64 {
+    0.001 * (0.5 * 2.0_f64.sqrt() + 0.5)
+}
+
+/// The resultant of II.A-27 as the source has it: the two components rounded to three decimals before they are added.
+fn rounded_resultant(outcome: &Outcome) -> f64 {
+    let report = analyse(&outcome.case.joint(law()).unwrap());
+    let force = report.cases[0].elastic().unwrap().critical.force_per_length * 25.4 / outcome.case.load;
+    let component = |value: f64| (value * 1000.0).round() / 1000.0;
+    component(component(force.x.abs()).hypot(component(force.y.abs())))
 }
 
 #[test]
 fn elastic_rows() {
     // Published: the file's rows. Independent: the unrounded components of II.A-27 below.
-    for row in rows("elastic") {
-        let (section, answer) = elastic_of(&row);
-        let line_force = 1.0 / answer.load_factor;
-        let printed = row.value();
-        let to_the_digit = |own: f64| {
-            assert!((own - printed).abs() <= HALF_A_UNIT * row.unit(), "{}: {own} against {printed}", row.id);
-        };
-        // The source rounds the two components to three decimals before it adds them.
-        let component = |value: f64| (value * 1000.0).round() / 1000.0;
-        let force = answer.critical.force_per_length;
-        let rounded = component(component(force.x.abs()).hypot(component(force.y.abs())));
-        // Two rounded components and their rounded resultant: off by at most (sqrt 2 + 1) / 2 of 0.001.
-        let resultant_rounding = 0.001 * (0.5 * 2.0_f64.sqrt() + 0.5);
-        match row.quantity.as_str() {
-            "i_x" => to_the_digit(section.i_x),
-            "i_y" => to_the_digit(section.i_y),
-            "j" => to_the_digit(section.j),
-            "line-force" => {
-                to_the_digit(rounded);
-                assert!((line_force - printed).abs() <= resultant_rounding);
+    for outcome in outcomes(Method::Elastic) {
+        let (case, own, printed) = (&outcome.case, computed(outcome), outcome.case.expected.value);
+        match case.quantity {
+            Quantity::InertiaX | Quantity::InertiaY | Quantity::InertiaPolar => to_the_digit(outcome, own),
+            Quantity::LineForce => {
+                to_the_digit(outcome, rounded_resultant(outcome));
+                assert!((own - printed).abs() <= resultant_rounding());
                 let independent = (8.75 * 5.0 / 385.416_667_f64).hypot(0.05 + 8.75 * 3.75 / 385.416_667);
-                assert!((line_force / independent - 1.0).abs() < 1e-8, "{line_force} against {independent}");
+                assert!((own / independent - 1.0).abs() < 1e-8, "{own} against {independent}");
             }
-            "load-lrfd" | "load-asd" => {
+            Quantity::LoadLrfd | Quantity::LoadAsd => {
                 // 1.392 and 0.928 kip/in are printed in the source; 3/8 in are 6 sixteenths.
                 let (per_sixteenth, factor) =
-                    if row.quantity == "load-lrfd" { (1.392, 0.75) } else { (0.928, 0.50) };
-                to_the_digit(per_sixteenth * 6.0 / rounded);
-                let own = factor * KIP_PER_INCH * 6.0 / line_force;
-                assert!((own / printed - 1.0).abs() <= resultant_rounding / 0.177, "{own} against {printed}");
+                    if case.quantity == Quantity::LoadLrfd { (1.392, 0.75) } else { (0.928, 0.50) };
+                to_the_digit(outcome, per_sixteenth * 6.0 / rounded_resultant(outcome));
+                assert!(
+                    (own / printed - 1.0).abs() <= resultant_rounding() / 0.177,
+                    "{own} against {printed}"
+                );
+                let line_force = outcomes(Method::Elastic)
+                    .find(|outcome| outcome.case.quantity == Quantity::LineForce)
+                    .map(computed)
+                    .unwrap();
+                assert!((own / (factor * KIP_PER_INCH * 6.0 / line_force) - 1.0).abs() < 1e-12, "{own}");
             }
-            "throat" => {
-                let load = if row.id == "BH-8.9" { 7500.0 } else { 60_000.0 };
-                let own = load * line_force / 100.0;
-                assert!((own / printed - 1.0).abs() <= SEVEN_DIGITS, "{}: {own} against {printed}", row.id);
+            Quantity::Throat => {
+                assert!((own / printed - 1.0).abs() <= SEVEN_DIGITS, "{}: {own} against {printed}", case.id);
             }
-            other => panic!("{other}"),
+            Quantity::Coefficient | Quantity::DesignCoefficient => panic!("{}", case.id),
         }
     }
 }
@@ -328,7 +313,7 @@ fn long_sides_with_a_short_end_weld_are_verified_by_j2_4_b() {
         [[weld]]\nname = \"lug\"\nleg = 6\npath = [[200, 0], [0, 0], [0, 20], [200, 20]]\n\
         [[load]]\ncase = \"pull\"\nat = [0, 10]\nforce = [-365, 0]\n";
     let joint = read_joint("lug.toml", text, &Options::default()).unwrap();
-    let report = weldpole::analysis::analyse(&joint);
+    let report = analyse(&joint);
     let case = &report.cases[0];
     let strength = |id: &str| {
         let check = case.checks.iter().find(|check| check.id.contains(id)).unwrap();

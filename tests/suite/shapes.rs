@@ -1,9 +1,10 @@
 //! The groups of the handbook tables: a vertical of length l, a second dimension k l, a load at a l.
 
-use crate::fixture::{at, group, straight};
+use crate::fixture::{at, group};
 use weldpole::mechanics::{PlaneGroup, Section};
 use weldpole::model::{Discretisation, Law, Run, Vector, WeldGroup, Wrench};
 use weldpole::solvers::{Search, UltimateSettings, UltimateSolver};
+use weldpole::study::selfcheck::Shape;
 
 /// 0.60 x 70 ksi x (1/16 in) / sqrt 2 in kip/in: strength of 1/16 in of E70 fillet per inch, without increase.
 pub const KIP_PER_INCH: f64 = 0.60 * 70.0 / 16.0 * std::f64::consts::FRAC_1_SQRT_2;
@@ -17,17 +18,7 @@ pub const LEG: f64 = 6.0;
 
 /// The runs of a shape of `data/cases`, for a vertical of length `l`.
 pub fn runs(shape: &str, k: f64, l: f64) -> Vec<Run> {
-    let w = k * l;
-    match shape {
-        "line" => vec![straight([0.0, 0.0], [0.0, l])],
-        "two-lines" => vec![straight([0.0, 0.0], [0.0, l]), straight([w, 0.0], [w, l])],
-        "two-lines-across" => vec![straight([0.0, 0.0], [l, 0.0]), straight([0.0, w], [l, w])],
-        "c" => {
-            vec![straight([w, 0.0], [0.0, 0.0]), straight([0.0, 0.0], [0.0, l]), straight([0.0, l], [w, l])]
-        }
-        "l" => vec![straight([0.0, l], [0.0, 0.0]), straight([0.0, 0.0], [w, 0.0])],
-        other => panic!("unknown shape {other}"),
-    }
+    Shape::named(shape).unwrap_or_else(|| panic!("unknown shape {shape}")).runs(k, l).unwrap()
 }
 
 /// A force of `size` N through the point a l to the right of the centroid, at an angle from the vertical.

@@ -28,6 +28,12 @@ pub const EXAMPLES: [(&str, &str); 4] = [
     ("us-units.toml", include_str!("../../../data/examples/us-units.toml")),
 ];
 
+/// Published values to compare with, one a row, each with its source.
+pub const PUBLISHED_CASES: &str = include_str!("../../../data/cases/plane-groups-published.csv");
+
+/// How far a computed value may be from a published one, and why.
+pub const CASE_TOLERANCES: &str = include_str!("../../../data/cases/tolerances.toml");
+
 const RULE_SETS: [&str; 3] = [
     include_str!("../../../data/rules/nominal.toml"),
     include_str!("../../../data/rules/aisc-360-22-lrfd.toml"),

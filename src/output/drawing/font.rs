@@ -84,7 +84,7 @@ mod tests {
         // prints them.
         assert!((width("0123456789", 100.0) - 572.0).abs() < 1e-9);
         assert!((width("1.5", 10.0) - 14.12).abs() < 1e-9);
-        for letter in "φΩθλ°±×·≤≥–…äßŁЖ−∞".chars() {
+        for letter in "φΩθλ°±×·–…äßŁЖ".chars() {
             assert!(face().glyph_index(letter).is_some(), "{letter}");
         }
     }

@@ -2,6 +2,7 @@
 
 mod files;
 mod formats;
+mod selfcheck;
 mod sweeps;
 mod verdicts;
 

@@ -78,16 +78,17 @@ impl Field {
     /// Polygons that cover where the value is at least `level`; whole cells of one row are joined.
     pub(super) fn above(&self, level: f64) -> Vec<Vec<Place>> {
         let mut polygons = Vec::new();
-        let mut whole: Option<[Place; 2]> = None;
+        // The row of a run of whole cells, its first column and the column behind it.
+        let mut whole: Option<[usize; 3]> = None;
+        let joined =
+            |[row, first, behind]: [usize; 3]| rectangle([place(first, row), place(behind, row + 1)]);
         for (column, row) in self.cells() {
             let corners = self.cell(column, row);
             let is_whole = corners.is_some_and(|corners| corners.iter().all(|(_, value)| *value >= level));
-            let here = [place(column, row), place(column + 1, row + 1)];
             match (&mut whole, is_whole) {
-                // The cells come row by row, so a run ends where the next cell does not begin.
-                (Some([_, end]), true) if end[0] == here[0][0] && end[1] == here[1][1] => *end = here[1],
-                (run, true) => polygons.extend(run.replace(here).map(rectangle)),
-                (run, false) => polygons.extend(run.take().map(rectangle)),
+                (Some([of, _, behind]), true) if *of == row && *behind == column => *behind = column + 1,
+                (run, true) => polygons.extend(run.replace([row, column, column + 1]).map(joined)),
+                (run, false) => polygons.extend(run.take().map(joined)),
             }
             if is_whole {
                 continue;
@@ -100,7 +101,7 @@ impl Field {
                 None => polygons.extend(self.quarters(column, row, level)),
             }
         }
-        polygons.extend(whole.map(rectangle));
+        polygons.extend(whole.map(joined));
         polygons
     }
 

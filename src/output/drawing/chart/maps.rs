@@ -47,7 +47,7 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
     let lines = notes::lines(sweep, WIDTH - 2.0 * sheet::MARGIN);
     let below = TOP[1] + SIZE.1 + BELOW;
     let height = below + font::LEADING * SMALL * as_float(lines.len()) + FOOT;
-    let mut canvas = Canvas::new(WIDTH, height);
+    let mut canvas = Canvas::new(WIDTH, height.ceil());
     sheet::head(&mut canvas, None, &sweep.joint.title, &notes::subject(sweep));
     let (dimension, units) = (notes::measure(sweep), sweep.joint.units);
     let shown =

@@ -222,6 +222,7 @@ fn number(canvas: &mut Canvas, value: f64, at: Spot, anchor: Anchor) {
 }
 
 #[cfg(test)]
+#[allow(clippy::float_cmp)] // round numbers are meant exactly
 mod tests {
     use super::*;
 
