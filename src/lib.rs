@@ -10,7 +10,7 @@
 //! # The path of the data
 //!
 //! ```text
-//! text --input--> model::Joint --analysis--> analysis::Report --output--> text, JSON, CSV
+//! text --input--> model::Joint --analysis--> analysis::Report --output--> text, JSON, CSV, SVG
 //!                                    |
 //!           mechanics: what a motion produces    solvers: which motion is the answer
 //!                                    verify: is the answer enough
@@ -34,7 +34,7 @@
 //! | [`verify`] | checks against a rule set, and which of them decides |
 //! | [`analysis`] | the pipeline from joint to report |
 //! | [`study`] | many joints or loads through the analysis |
-//! | [`output`] | report to text, JSON and CSV |
+//! | [`output`] | report, sweep and self-check to text, JSON, CSV and drawings |
 //!
 //! # Example
 //!
