@@ -1,5 +1,6 @@
 //! The command line as a user meets it: the binary is run, its status, output and messages are read.
 
+mod figures;
 mod files;
 mod formats;
 mod selfcheck;
