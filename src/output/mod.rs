@@ -18,6 +18,7 @@ mod drawing;
 mod fixture;
 mod json;
 mod layout;
+mod methods;
 mod names;
 mod number;
 mod rules;

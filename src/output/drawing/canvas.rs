@@ -1,7 +1,7 @@
 //! A page on which lines, areas and texts are put: it becomes an SVG document.
 //!
-//! x points right, y down, lengths are in px. Coordinates are rounded to hundredths in `number.rs`. Source: Scalable Vector
-//! Graphics (SVG) 1.1, W3C Recommendation 2011; `paint-order` is from SVG 2.
+//! x points right, y down, lengths are in px. Coordinates are rounded to hundredths in `number.rs`.
+//! Source: Scalable Vector Graphics (SVG) 1.1, W3C Recommendation 2011; `paint-order` is from SVG 2.
 
 use super::font;
 use super::ink::Ink;

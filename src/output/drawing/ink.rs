@@ -1,7 +1,7 @@
 //! Colours: a small set that tells things apart for every eye, and in grey.
 //!
-//! The two methods are a dark blue and a light orange; the deformation ramp goes from pale straw to dark blue with steadily
-//! falling lightness, so that it is read the same in grey. What matters has a shape or a word besides its colour.
+//! The two methods are a dark blue and a light orange; the deformation ramp goes from pale straw to dark blue with
+//! steadily falling lightness, so that it is read the same in grey. What matters has a shape or a word besides.
 //!
 //! Lightness: `L = 0.2126 R' + 0.7152 G' + 0.0722 B'` of the linear components. Source: IEC 61966-2-1 (sRGB).
 

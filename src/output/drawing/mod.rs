@@ -12,8 +12,7 @@
 //! | `chart/` | a sweep: curves and maps |
 //! | `png.rs` | SVG to PNG (feature `png`) |
 //!
-//! Coordinates are in px of a page about 1200 px wide. No text overlaps another: what has no room is listed or left out, never
-//! put over something else.
+//! Coordinates are in px of a page 1200 px wide. No text overlaps another: what has no room is listed or left out.
 
 mod arrow;
 mod canvas;

@@ -1,8 +1,8 @@
 //! From the joint's plane to the page: one scale for both directions, y turned from up to down.
 //!
 //! What must be seen is a list of [`Need`]s: points of the joint, each with room around it in px. The scale is
-//! the largest at which all fit the frame; the needed width `max(s x + right) - min(s x - left)` grows with s, so it is found by
-//! bisection.
+//! the largest at which all fit the frame; the needed width `max(s x + right) - min(s x - left)` grows with s, so it
+//! is found by bisection.
 
 use super::canvas::{Area, Spot};
 use crate::model::Vector;

@@ -1,8 +1,9 @@
 //! One case in detail: the load, the two methods side by side, the states found, the checks.
 
-use crate::analysis::{Analyses, CaseReport, Coefficients, Status, Strength};
+use crate::analysis::{Analyses, CaseReport, Coefficients, Status};
 use crate::model::{Basis, Joint, Vector};
 use crate::output::layout::{Emphasis, Layout};
+use crate::output::methods::Methods;
 use crate::output::number::{MISSING, degrees, people, point, quantity, small, utilisation};
 use crate::output::table::{Cell, Side, Table, clip, hanging, labelled};
 use crate::output::words;
@@ -43,49 +44,25 @@ fn load(case: &CaseReport, units: UnitSystem, layout: &Layout) -> String {
     labelled(2, &[("Load", text)], layout.columns())
 }
 
-/// A strength as the size of the load it stands for.
-fn resultant(case: &CaseReport, factor: Option<f64>, units: UnitSystem) -> String {
-    let shown = |(size, in_moment): (f64, bool)| {
-        quantity(units, if in_moment { Dimension::Moment } else { Dimension::Force }, size)
-    };
-    factor.and_then(|factor| case.load_times(factor)).map_or_else(|| MISSING.to_owned(), shown)
-}
-
 /// The two methods side by side.
 fn methods(case: &CaseReport, joint: &Joint, layout: &Layout) -> String {
     let units = joint.units;
-    let (ultimate, elastic) = (case.ultimate_strength(joint), case.elastic_strength(joint));
-    let accepted = joint.accepts(Basis::Ultimate);
-    let design = |strength: Option<Strength>| strength.and_then(|strength| strength.design_load_factor);
-    let nominal = |strength: Option<Strength>| strength.map(|strength| strength.load_factor);
-    let factor = |value: Option<f64>| value.map_or_else(|| MISSING.to_owned(), people);
-    let used = |basis: Basis, strength: Option<Strength>| {
-        let exceeded =
-            case.checks.iter().any(|check| check.basis == basis && check.accepted && !check.satisfied);
-        let value = strength.and_then(|strength| strength.utilisation());
-        value.map_or_else(|| MISSING.to_owned(), |value| utilisation(value, exceeded))
-    };
-    let guarded = |text: String| if accepted { text } else { "not accepted".to_owned() };
+    let methods = Methods::of(case, joint);
     let mut table = Table::new(&[("", Side::Flexible), ("ultimate", Side::Right), ("elastic", Side::Right)]);
     let mut row = |label: &str, left: String, right: String| {
         table.row(vec![label.into(), clip(&left, METHOD_WIDTH).into(), clip(&right, METHOD_WIDTH).into()]);
     };
     row("method", words::basis(Basis::Ultimate).into(), words::basis(Basis::Elastic).into());
-    let word = |basis: Basis| if joint.accepts(basis) { "accepted" } else { "information" }.to_owned();
-    row("under these rules", word(Basis::Ultimate), word(Basis::Elastic));
-    row(
-        "nominal strength",
-        resultant(case, nominal(ultimate), units),
-        resultant(case, nominal(elastic), units),
-    );
-    row(
-        "design strength",
-        guarded(resultant(case, design(ultimate), units)),
-        resultant(case, design(elastic), units),
-    );
-    row("load factor, nominal", factor(nominal(ultimate)), factor(nominal(elastic)));
-    row("load factor, design", guarded(factor(design(ultimate))), factor(design(elastic)));
-    row("utilisation", guarded(used(Basis::Ultimate, ultimate)), used(Basis::Elastic, elastic));
+    for (label, [left, right]) in [
+        ("under these rules", methods.standing),
+        ("nominal strength", methods.nominal),
+        ("design strength", methods.design),
+        ("load factor, nominal", methods.nominal_factor),
+        ("load factor, design", methods.design_factor),
+        ("utilisation", methods.utilisation),
+    ] {
+        row(label, left, right);
+    }
     let state = case.ultimate().map(Ultimate::governing);
     let centre = state.map_or_else(
         || MISSING.to_owned(),

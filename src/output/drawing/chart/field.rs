@@ -1,8 +1,8 @@
 //! Values on a grid of points as regions above a level and lines at it.
 //!
-//! A cell between four points is cut into four triangles about its middle, whose value is their mean; on each triangle the
-//! value is linear. A cell that is torn (the strength jumps at one of its sides) or has a point without value is not
-//! interpolated: each of its points fills a quarter, and no line is drawn, so that a jump shows as a step.
+//! A cell between four points is cut into four triangles about its middle, whose value is their mean; on each
+//! triangle the value is linear. A cell that is torn (the strength jumps at one of its sides) or has a point without
+//! value is not interpolated: each of its points fills a quarter, and no line is drawn, so that a jump is a step.
 
 /// A point in units of the grid.
 pub(super) type Place = [f64; 2];

@@ -8,8 +8,8 @@
 //! | one plot: frame, ticks, curves by plotters | `plot.rs`, `pen.rs` |
 //! | what the drawing says in words | `notes.rs` |
 //!
-//! Every point drawn is a point solved. Between points curves are straight and maps linear, except where the strength jumps: there
-//! nothing is drawn between.
+//! Every point drawn is a point solved. Between points curves are straight and maps linear, except where the
+//! strength jumps: there nothing is drawn between.
 
 mod curves;
 mod field;

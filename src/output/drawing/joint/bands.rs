@@ -1,7 +1,7 @@
 //! The welds to scale: bands as wide as the leg, coloured by deformation over its rupture limit.
 //!
-//! Neighbouring cells of one shade are drawn as one piece. A band narrower than [`THINNEST`] px is drawn that wide, and the
-//! drawing says so. The run that ruptures first is drawn last, so that its shade is the one seen at a corner.
+//! Neighbouring cells of one shade are drawn as one piece. A band narrower than [`THINNEST`] px is drawn that wide,
+//! and the drawing says so. The run that ruptures first is drawn last: its shade is the one seen at a corner.
 
 use super::super::canvas::{Area, Canvas, Spot, Stroke, spot};
 use super::super::ink::{Ink, as_float, ramp};

@@ -9,9 +9,8 @@ use super::forces::{ELASTIC, Forces, ULTIMATE};
 use super::marks;
 use super::subject::Subject;
 use super::welds;
-use crate::analysis::Strength;
-use crate::model::Basis;
-use crate::output::number::{MISSING, length, people, quantity, utilisation};
+use crate::output::methods::Methods;
+use crate::output::number::{length, people, quantity};
 use crate::output::words;
 use crate::units::Dimension;
 
@@ -118,24 +117,7 @@ pub(super) fn draw(
 
 /// The two methods side by side.
 fn methods(column: &mut Column<'_>, subject: &Subject<'_>) {
-    let (case, joint) = (subject.case, subject.joint());
-    let (ultimate, elastic) = (case.ultimate_strength(joint), case.elastic_strength(joint));
-    let resultant = |factor: Option<f64>| {
-        let shown = |(size, in_moment): (f64, bool)| {
-            quantity(joint.units, if in_moment { Dimension::Moment } else { Dimension::Force }, size)
-        };
-        factor.and_then(|factor| case.load_times(factor)).map_or_else(|| MISSING.to_owned(), shown)
-    };
-    let nominal = |strength: Option<Strength>| strength.map(|strength| strength.load_factor);
-    let design = |strength: Option<Strength>| strength.and_then(|strength| strength.design_load_factor);
-    let number = |value: Option<f64>| value.map_or_else(|| MISSING.to_owned(), people);
-    let used = |basis: Basis, strength: Option<Strength>| {
-        let exceeded =
-            case.checks.iter().any(|check| check.basis == basis && check.accepted && !check.satisfied);
-        let value = strength.and_then(|strength| strength.utilisation());
-        value.map_or_else(|| MISSING.to_owned(), |value| utilisation(value, exceeded))
-    };
-    let word = |basis: Basis| if joint.accepts(basis) { "accepted" } else { "information" }.to_owned();
+    let methods = Methods::of(subject.case, subject.joint());
     let middle = column.left + 0.64 * column.room();
     let mut row = |label: &str, left: &str, right: &str, ink: Ink| {
         let y = column.y + 0.5 * ROW + 0.5 * font::CAPITALS * SMALL;
@@ -155,12 +137,16 @@ fn methods(column: &mut Column<'_>, subject: &Subject<'_>) {
         column.y += ROW;
     };
     row("", "ultimate", "elastic", Ink::TEXT);
-    row("under the rules", &word(Basis::Ultimate), &word(Basis::Elastic), Ink::QUIET);
-    row("nominal strength", &resultant(nominal(ultimate)), &resultant(nominal(elastic)), Ink::TEXT);
-    row("design strength", &resultant(design(ultimate)), &resultant(design(elastic)), Ink::TEXT);
-    row("load factor", &number(nominal(ultimate)), &number(nominal(elastic)), Ink::TEXT);
-    row("utilisation", &used(Basis::Ultimate, ultimate), &used(Basis::Elastic, elastic), Ink::TEXT);
-    if let Some(ratio) = case.ultimate_over_elastic() {
+    for (label, [left, right], ink) in [
+        ("under the rules", &methods.standing, Ink::QUIET),
+        ("nominal strength", &methods.nominal, Ink::TEXT),
+        ("design strength", &methods.design, Ink::TEXT),
+        ("load factor", &methods.nominal_factor, Ink::TEXT),
+        ("utilisation", &methods.utilisation, Ink::TEXT),
+    ] {
+        row(label, left, right, ink);
+    }
+    if let Some(ratio) = subject.case.ultimate_over_elastic() {
         row("ultimate / elastic", &people(ratio), "", Ink::TEXT);
     }
 }
