@@ -224,8 +224,8 @@ fn count(text: &str, origin: &Origin, faults: &mut Faults<'_>) -> Option<usize> 
     let read = text.parse::<usize>().ok().filter(|count| (2..=MOST_VALUES).contains(count));
     if read.is_none() {
         faults
-            .at(origin, format!("the number of values must be whole, found `{}`", shortened(text)))
-            .accepted(format!("2 to {MOST_VALUES}"));
+            .at(origin, format!("a number of values is wanted, found `{}`", shortened(text)))
+            .accepted(format!("a whole number from 2 to {MOST_VALUES}"));
     }
     read
 }

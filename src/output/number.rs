@@ -127,6 +127,11 @@ pub(super) fn share(share: f64) -> String {
     if share < 1e-5 { format!("{share:e}") } else { format!("{} %", trimmed(share * 100.0)) }
 }
 
+/// Decimals beyond three figures of a step that are spent to show values exactly.
+const MORE_DECIMALS: usize = 3;
+/// Share of a step that counts as nothing.
+const EXACT: f64 = 1e-9;
+
 /// A residual or error: two figures.
 pub(super) fn small(value: f64) -> String {
     if value == 0.0 { "0".to_owned() } else { format!("{value:.1e}") }
@@ -146,6 +151,30 @@ pub(super) fn quantity(units: UnitSystem, dimension: Dimension, value: f64) -> S
 /// A length for people, without zeros at the end.
 pub(super) fn length(units: UnitSystem, value: f64) -> String {
     format!("{} {}", trimmed(units.shown(Dimension::Length, value)), units.symbol(Dimension::Length))
+}
+
+/// The leg of a weld for people: in the US system sixteenths of an inch as a fraction, as drawings have them.
+pub(super) fn leg(units: UnitSystem, value: f64) -> String {
+    let sixteenths = units.shown(Dimension::Length, value) * 16.0;
+    let whole = sixteenths.round();
+    let is_fraction = units == UnitSystem::Us
+        && (sixteenths - whole).abs() <= NOISE * whole
+        && (1.0..=32.0).contains(&whole);
+    if !is_fraction {
+        return length(units, value);
+    }
+    #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)] // between 1 and 32
+    let mut top = whole as u32;
+    let mut bottom = 16;
+    while top % 2 == 0 && bottom > 1 {
+        (top, bottom) = (top / 2, bottom / 2);
+    }
+    let unit = units.symbol(Dimension::Length);
+    match (top / bottom, top % bottom) {
+        (whole, 0) => format!("{whole} {unit}"),
+        (0, top) => format!("{top}/{bottom} {unit}"),
+        (whole, top) => format!("{whole} {top}/{bottom} {unit}"),
+    }
 }
 
 /// Components with their unit, `(0, -60) kN`; the third is left out when it is zero.
@@ -172,7 +201,15 @@ pub(super) fn coordinate(value: f64) -> String {
 pub(super) fn graded(values: &[f64], step: f64) -> Vec<String> {
     let step = step.abs();
     #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)] // clamped
-    let decimals = if step > 0.0 { (2.0 - step.log10().floor()).clamp(0.0, 15.0) as usize } else { 0 };
+    let three_figures = if step > 0.0 { (2.0 - step.log10().floor()).clamp(0.0, 15.0) as usize } else { 0 };
+    // A few decimals more where they say the values exactly: 132.5 is not shown as 132.
+    let is_exact = |decimals: &usize| {
+        let error = |value: &f64| {
+            format!("{value:.decimals$}").parse::<f64>().map_or(f64::INFINITY, |text| (text - value).abs())
+        };
+        values.iter().all(|value| error(value) <= EXACT * step)
+    };
+    let decimals = (three_figures..=three_figures + MORE_DECIMALS).find(is_exact).unwrap_or(three_figures);
     // Adding zero turns a rounded -0 into 0.
     let rounded =
         |value: &f64| format!("{value:.decimals$}").parse::<f64>().map_or(*value, |value| value + 0.0);
@@ -190,6 +227,17 @@ pub(super) fn degrees(angle: f64) -> String {
 #[cfg(test)]
 mod tests {
     use super::*;
+
+    #[test]
+    fn legs_in_inches_are_fractions() {
+        let inch = crate::units::MM_PER_INCH;
+        for (size, words) in
+            [(0.3125, "5/16 in"), (0.25, "1/4 in"), (1.0, "1 in"), (1.375, "1 3/8 in"), (0.3, "0.3 in")]
+        {
+            assert_eq!(leg(UnitSystem::Us, size * inch), words);
+        }
+        assert_eq!(leg(UnitSystem::Metric, 0.25 * inch), "6.35 mm");
+    }
 
     #[test]
     fn a_utilisation_above_one_never_reads_as_one() {

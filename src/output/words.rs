@@ -1,7 +1,7 @@
 //! The words for people, in texts and drawings: verdicts, bases, titles.
 
 use crate::analysis::{Analyses, CaseReport, Report, Status};
-use crate::model::{Basis, Confirmation, Discretisation, Joint};
+use crate::model::{Basis, Confirmation, DesignFactor, Discretisation, Joint};
 use crate::output::layout::Emphasis;
 use crate::output::number::{MISSING, percent, utilisation};
 
@@ -110,8 +110,30 @@ pub(super) fn deciding(report: &Report) -> String {
     format!("utilisation {} in case {}, {by}{clause}{breach}", case_utilisation(case), case.name)
 }
 
+/// What decides one case, in a sentence.
+pub(super) fn decision(case: &CaseReport) -> String {
+    match (&case.analyses, &case.verification) {
+        (_, Some(verification)) => {
+            let by = basis(verification.basis);
+            format!("Decided by {by}: utilisation {}, {}.", case_utilisation(case), status(case.status))
+        }
+        (Analyses::Unloaded, None) => "No load: nothing to resist.".to_owned(),
+        (Analyses::Loaded { .. }, None) => "Not solved: no verification.".to_owned(),
+    }
+}
+
+/// Rules, design factor, law and how the welds are integrated, in brief.
+pub(super) fn basis_in_brief(joint: &Joint) -> String {
+    let factor = match &joint.rules.design {
+        DesignFactor::None => String::new(),
+        DesignFactor::Resistance(phi) => format!(", phi = {}", phi.value),
+        DesignFactor::Safety(omega) => format!(", Omega = {}", omega.value),
+    };
+    format!("{}{factor}; {}", joint.rules.id, law_in_brief(joint))
+}
+
 /// The law and how the welds are integrated, in brief.
-pub(super) fn law_in_brief(joint: &Joint) -> String {
+fn law_in_brief(joint: &Joint) -> String {
     format!("{}, {}", joint.law.id, discretisation(joint))
 }
 

@@ -3,6 +3,7 @@
 use super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text};
 use super::font;
 use super::ink::Ink;
+use crate::model::Joint;
 use crate::output::layout::Emphasis;
 
 /// Left and right margin, px.
@@ -40,13 +41,34 @@ pub(super) fn head(canvas: &mut Canvas, verdict: Option<(&str, Emphasis)>, title
     canvas.line(Spot::new(MARGIN, 85.0), Spot::new(right, 85.0), Stroke::solid(Ink::TEXT, 1.4));
 }
 
-/// The cautions.
-pub(super) fn foot(canvas: &mut Canvas) {
+/// The cautions, and what the drawing belongs to.
+pub(super) fn foot(canvas: &mut Canvas, joint: &Joint) {
     let page = canvas.page();
     let (left, right, y) = (MARGIN, page.most.x - MARGIN, page.most.y - 14.0);
-    canvas.line(Spot::new(left, y - 20.0), Spot::new(right, y - 20.0), Stroke::solid(Ink::HAIR, 1.0));
+    let above = y - font::LEADING * SMALL;
+    canvas.line(Spot::new(left, above - 20.0), Spot::new(right, above - 20.0), Stroke::solid(Ink::HAIR, 1.0));
     let size = SMALL.min(SMALL * (right - left) / font::width(CAUTION, SMALL));
-    canvas.text(&Text { size, ink: Ink::QUIET, ..Text::new(CAUTION, Spot::new(left, y)) });
+    canvas.text(&Text { size, ink: Ink::QUIET, ..Text::new(CAUTION, Spot::new(left, above)) });
+    let origin = font::clipped(&origin(joint), SMALL, right - left);
+    canvas.text(&Text { size: SMALL, ink: Ink::QUIET, ..Text::new(&origin, Spot::new(left, y)) });
+}
+
+/// The title block of the joint file, as far as it is given, the file and the program.
+fn origin(joint: &Joint) -> String {
+    let document = &joint.document;
+    let given = [
+        ("", &document.project),
+        ("", &document.subject),
+        ("by ", &document.author),
+        ("checked by ", &document.checker),
+        ("revision ", &document.revision),
+        ("", &document.date),
+    ];
+    let mut parts: Vec<String> =
+        given.iter().filter_map(|(what, words)| Some(format!("{what}{}", words.as_ref()?))).collect();
+    parts.push(joint.file.clone());
+    parts.push(format!("weldpole {}", env!("CARGO_PKG_VERSION")));
+    parts.join("; ")
 }
 
 /// The colour of a verdict.

@@ -49,12 +49,12 @@ impl<'s> Labels<'s> {
         parts.join(", ")
     }
 
-    /// What a variable runs through: `arm from 150 mm to 600 mm, 10 values; the file has 290 mm`.
+    /// What a variable runs through: `arm from 150 mm to 600 mm, 10 values; 290 mm as given`.
     pub(in crate::output) fn range(&self, variable: usize) -> String {
         let last = self.values(variable).len().saturating_sub(1);
         let Variable { name, given, .. } = &self.sweep.variables[variable];
         let given =
-            given.map_or_else(String::new, |own| format!("; the file has {}", self.between(variable, own)));
+            given.map_or_else(String::new, |own| format!("; {} as given", self.between(variable, own)));
         let (from, to) = (self.value(variable, 0), self.value(variable, last));
         format!("{name} from {from} to {to}, {} values{given}", last + 1)
     }

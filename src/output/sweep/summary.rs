@@ -47,6 +47,14 @@ pub(in crate::output) fn sentences(sweep: &Sweep, labels: &Labels<'_>) -> Vec<St
 pub(in crate::output) fn out_of_the_ordinary(sweep: &Sweep) -> Vec<String> {
     let mut sentences = Vec::new();
     sentences.extend(governed_by_others(sweep));
+    let concentric = sweep.decided_by(Basis::Concentric);
+    if concentric > 0 {
+        sentences.push(format!(
+            "At {} a rule for loads through the centroid decides; it holds there alone, so nothing may be interpolated \
+             beside it.",
+            points(concentric)
+        ));
+    }
     let several = sweep.with_several_states();
     if several > 0 {
         sentences.push(format!(
@@ -93,7 +101,7 @@ fn governed_by_others(sweep: &Sweep) -> Option<String> {
         .filter(|(case, _)| *case != sweep.shown)
         .filter_map(|(case, count)| Some(format!("{} ({})", sweep.cases.get(case)?, points(count))))
         .collect();
-    (!others.is_empty()).then(|| format!("Another case governs at some points: {}.", others.join(", ")))
+    (!others.is_empty()).then(|| format!("Another case governs: {}.", others.join(", ")))
 }
 
 /// Why points have no joint.

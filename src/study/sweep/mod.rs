@@ -23,6 +23,7 @@ use crate::diagnostic::{Diagnostic, Severity};
 use crate::input::Template;
 use crate::model::Joint;
 use solve::Task;
+use std::collections::BTreeMap;
 
 /// What one case says at one point.
 #[derive(Debug, Clone, PartialEq)]
@@ -78,8 +79,8 @@ pub struct Sweep {
     pub variables: Vec<Variable>,
     /// Names of the cases analysed: the one asked for, or all of the joint.
     pub cases: Vec<String>,
-    /// Index in `cases` of the case that is shown: the one asked for, else the governing one of the joint as it
-    /// stands, else the first.
+    /// Index in `cases` of the case that is shown: the one asked for, else the one that governs at most points, else
+    /// the governing one of the joint as it stands.
     pub shown: usize,
     /// The points; the first variable runs slowest.
     pub points: Vec<Point>,
@@ -105,10 +106,21 @@ pub fn sweep(
     let task = Task { template, variables, only };
     task.refuse_cases_without_force()?;
     let cases: Vec<String> = task.cases_of(joint).iter().map(|case| case.name.clone()).collect();
-    let shown = if only.is_some() { 0 } else { analyse(joint).governing.unwrap_or(0) };
     let points = task.solve(&grid(variables), progress);
+    let as_given = || analyse(joint).governing.unwrap_or(0);
+    let shown = if only.is_some() { 0 } else { most_governing(&points).unwrap_or_else(as_given) };
     let jumps = jumps::find(&task, &points, shown);
     Ok(Sweep { joint: joint.clone(), variables: variables.to_vec(), cases, shown, points, jumps })
+}
+
+/// The case that governs at most points; the first of equals.
+fn most_governing(points: &[Point]) -> Option<usize> {
+    let mut counts: BTreeMap<usize, usize> = BTreeMap::new();
+    for case in points.iter().filter_map(|point| point.outcome.as_ref().ok()?.governing) {
+        *counts.entry(case).or_default() += 1;
+    }
+    let most = counts.values().max()?;
+    counts.iter().find(|(_, count)| *count == most).map(|(case, _)| *case)
 }
 
 /// All combinations of values, the first variable slowest.

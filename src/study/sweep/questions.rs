@@ -4,6 +4,7 @@
 use super::{Answer, Jump, Point, PointCase, Sweep};
 use crate::analysis::Status;
 use crate::diagnostic::Diagnostic;
+use crate::model::Basis;
 use std::collections::BTreeMap;
 
 /// Points, by index, at which the ratio of the two methods is extreme.
@@ -113,6 +114,17 @@ impl Sweep {
     #[must_use]
     pub fn verdict(&self) -> Status {
         self.points.iter().map(Point::status).max().unwrap_or(Status::Satisfied)
+    }
+
+    /// At how many points the governing case is verified by an analysis.
+    #[must_use]
+    pub fn decided_by(&self, basis: Basis) -> usize {
+        let decided = |point: &&Point| {
+            let answer = point.outcome.as_ref().ok();
+            let case = answer.and_then(|answer| answer.cases.get(answer.governing?));
+            case.and_then(|case| case.verification.as_ref()).is_some_and(|found| found.basis == basis)
+        };
+        self.points.iter().filter(decided).count()
     }
 
     /// How many points have this status.

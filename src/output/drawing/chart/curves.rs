@@ -10,12 +10,11 @@ use super::super::sheet;
 use super::notes;
 use super::plot::{Mark, Plot, range};
 use crate::analysis::Status;
-use crate::model::Basis;
 use crate::study::sweep::{Jump, Point, PointCase, Sweep, Variable};
 use crate::units::UnitSystem;
 
 /// Size of the page, px.
-const PAGE: (f64, f64) = (1200.0, 812.0);
+const PAGE: (f64, f64) = (1200.0, 830.0);
 /// Left and right edge of the plots.
 const ACROSS: [f64; 2] = [88.0, 742.0];
 /// Upper and lower edges of strength, ratio, utilisation.
@@ -24,6 +23,10 @@ const HEIGHTS: [[f64; 2]; 3] = [[128.0, 410.0], [462.0, 570.0], [622.0, 716.0]];
 const NOTES: [f64; 4] = [852.0, 98.0, 1176.0, 770.0];
 /// Most points that are marked one by one.
 const MOST_MARKED: usize = 80;
+/// What stands at the value that the variable has without the sweep.
+const AS_GIVEN: &str = "as given";
+/// Room for the title of the uppermost plot, px.
+const TITLE_ROOM: f64 = 190.0;
 /// Room above the highest value, as a share.
 const HEADROOM: f64 = 0.06;
 
@@ -117,7 +120,7 @@ pub(super) fn drawn(sweep: &Sweep, variable: &Variable) -> Canvas {
     as_given(&mut canvas, variable, x);
     let panel = Area::new(NOTES[0], NOTES[1], NOTES[2], NOTES[3]);
     notes::draw(&mut canvas, &panel, sweep);
-    sheet::foot(&mut canvas);
+    sheet::foot(&mut canvas, &sweep.joint);
     canvas
 }
 
@@ -126,7 +129,7 @@ fn area(index: usize) -> Area {
     Area::new(ACROSS[0], top, ACROSS[1], bottom)
 }
 
-/// A line through all plots at the value the file has.
+/// A line through all plots at the value that the variable has without the sweep.
 fn as_given(canvas: &mut Canvas, variable: &Variable, x: [f64; 2]) {
     let Some(given) = variable.given.map(|given| variable.shown(given)) else { return };
     if given < x[0] || given > x[1] {
@@ -137,12 +140,14 @@ fn as_given(canvas: &mut Canvas, variable: &Variable, x: [f64; 2]) {
         canvas.line(plot.spot(given, 0.0), plot.spot(given, 1.0), Stroke::dashed(Ink::QUIET, 1.0, 2.0, 3.0));
     }
     let plot = Plot::new(area(0), x, [0.0, 1.0]);
-    let words = "as in the file";
-    let at = plot.spot(given, 1.0) + Spot::new(6.0, 7.0 + font::ASCENT * SMALL);
-    let text = Text { size: SMALL, ink: Ink::QUIET, halo: true, ..Text::new(words, at) };
-    let fits = text.area().most.x <= plot.area.most.x;
-    let other = Text { anchor: Anchor::End, at: at - Spot::new(12.0, 0.0), ..text.clone() };
-    canvas.text(if fits { &text } else { &other });
+    let width = font::width(AS_GIVEN, SMALL);
+    let x = plot
+        .spot(given, 1.0)
+        .x
+        .clamp(plot.area.least.x + TITLE_ROOM + width / 2.0, plot.area.most.x - width / 2.0);
+    let at = Spot::new(x, plot.area.least.y - 9.0);
+    let text = Text { size: SMALL, ink: Ink::QUIET, anchor: Anchor::Middle, ..Text::new(AS_GIVEN, at) };
+    canvas.text(&text);
 }
 
 /// From zero to a little above the values.
@@ -209,7 +214,7 @@ fn ratio(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
 fn utilisation(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
     let value = |point: &Point| point.outcome.as_ref().ok()?.utilisation();
     let no_jump = |_: &Jump, _: usize| None;
-    let same_basis = |one: &Point, next: &Point| deciding(one) == deciding(next);
+    let same_basis = |one: &Point, next: &Point| notes::deciding(one) == notes::deciding(next);
     let quantity =
         Quantity { sweep, variable, value: &value, jumps: true, at_jump: &no_jump, joined: &same_basis };
     let values = quantity.values();
@@ -227,13 +232,6 @@ fn utilisation(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64;
         let (mark, ink) = if holds { (Mark::Dot, Ink::TEXT) } else { (Mark::Ring, Ink::EXCEEDED) };
         mark.draw(canvas, plot.spot(*x, *y), ink);
     }
-}
-
-/// Which case decides a point, and by which analysis.
-fn deciding(point: &Point) -> Option<(usize, Basis)> {
-    let answer = point.outcome.as_ref().ok()?;
-    let governing = answer.governing?;
-    Some((governing, answer.cases.get(governing)?.verification.as_ref()?.basis))
 }
 
 /// Rings at both ends of a jump.

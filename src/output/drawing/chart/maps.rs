@@ -20,13 +20,13 @@ const WIDTH: f64 = 1200.0;
 /// From the lower maps to the first line below them, px.
 const BELOW: f64 = 66.0;
 /// From the last line to the end of the page, px.
-const FOOT: f64 = 30.0;
+const FOOT: f64 = 50.0;
 /// Left edges of the maps.
 const LEFT: [f64; 2] = [80.0, 676.0];
 /// Upper edges of the maps.
 const TOP: [f64; 2] = [128.0, 508.0];
 /// Size of a map, px.
-const SIZE: (f64, f64) = (436.0, 296.0);
+const SIZE: (f64, f64) = (430.0, 296.0);
 /// Most levels of a map.
 const LEVELS: usize = 9;
 /// Utilisation at which a joint ceases to hold.
@@ -38,6 +38,8 @@ struct Map<'s> {
     value: &'s dyn Fn(&Point) -> Option<f64>,
     /// Whether it jumps with the ultimate strength.
     jumps: bool,
+    /// Whether it steps where another case or analysis decides.
+    decided: bool,
     /// A level of its own, drawn strong.
     limit: Option<f64>,
 }
@@ -66,16 +68,24 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
             title: format!("nominal ultimate strength, {unit}"),
             value: &ultimate,
             jumps: true,
+            decided: false,
             limit: None,
         },
         Map {
             title: format!("nominal elastic strength, {unit}"),
             value: &elastic,
             jumps: false,
+            decided: false,
             limit: None,
         },
-        Map { title: "ultimate / elastic".into(), value: &ratio, jumps: true, limit: None },
-        Map { title: notes::utilisation(sweep).into(), value: &utilisation, jumps: true, limit: Some(LIMIT) },
+        Map { title: "ultimate / elastic".into(), value: &ratio, jumps: true, decided: false, limit: None },
+        Map {
+            title: notes::utilisation(sweep).into(),
+            value: &utilisation,
+            jumps: true,
+            decided: true,
+            limit: Some(LIMIT),
+        },
     ];
     let torn: BTreeSet<[usize; 2]> = sweep.jumps.iter().map(|jump| jump.points).collect();
     for (index, map) in maps.iter().enumerate() {
@@ -90,7 +100,7 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
         draw(&mut canvas, sweep, [across, up], &torn, map, &plot);
     }
     canvas.lines(&lines, Spot::new(sheet::MARGIN, below), SMALL, Ink::TEXT);
-    sheet::foot(&mut canvas);
+    sheet::foot(&mut canvas, &sweep.joint);
     canvas
 }
 
@@ -105,8 +115,11 @@ fn draw(
     // The first variable runs slowest.
     let index = |column: usize, row: usize| column * up.values.len() + row;
     let value = |column: usize, row: usize| sweep.points.get(index(column, row)).and_then(map.value);
-    let is_torn =
-        |[a, b]: [usize; 2], [c, d]: [usize; 2]| map.jumps && torn.contains(&[index(a, b), index(c, d)]);
+    let is_torn = |[a, b]: [usize; 2], [c, d]: [usize; 2]| {
+        let pair = [index(a, b), index(c, d)];
+        let [one, next] = pair.map(|point| sweep.points.get(point).and_then(notes::deciding));
+        (map.jumps && torn.contains(&pair)) || (map.decided && one != next)
+    };
     let field = Field::new(across.values.len(), up.values.len(), value, is_torn);
     let spot = |place: Place| {
         let at = |variable: &Variable, share: f64| {
@@ -115,6 +128,7 @@ fn draw(
         };
         plot.spot(at(across, place[0]), at(up, place[1]))
     };
+    canvas.area(&plot.area, Some(Ink::HAIR), None);
     let Some(extent) = field.extent() else {
         plot.axes(canvas, Some(&notes::axis(across)), &map.title);
         return;
@@ -135,9 +149,14 @@ fn draw(
     for (band, level) in (1..).zip(&levels) {
         fill(*level, shade(as_float(band) / bands));
     }
-    contours(canvas, &field, &levels, map.limit, plot, &spot);
+    let mut space = Space::new(plot.area.grown(-4.0));
     if let (Some(x), Some(y)) = (across.given, up.given) {
-        as_given(canvas, plot, plot.spot(across.shown(x), up.shown(y)));
+        let at = plot.spot(across.shown(x), up.shown(y));
+        space.take(Area::around(at, Spot::new(18.0, 18.0)));
+        contours(canvas, &mut space, &field, &levels, map.limit, &spot);
+        as_given(canvas, plot, at);
+    } else {
+        contours(canvas, &mut space, &field, &levels, map.limit, &spot);
     }
     plot.axes_over(canvas, &notes::axis(across), &notes::axis(up), &map.title);
     legend(canvas, plot, &levels, extent);
@@ -161,13 +180,12 @@ fn shade(share: f64) -> Ink {
 
 fn contours(
     canvas: &mut Canvas,
+    space: &mut Space,
     field: &Field,
     levels: &[f64],
     limit: Option<f64>,
-    plot: &Plot,
     spot: &dyn Fn(Place) -> Spot,
 ) {
-    let mut space = Space::new(plot.area.grown(-4.0));
     let strong = limit.map(|limit| (limit, Stroke::solid(Ink::EXCEEDED, 2.6), Ink::EXCEEDED));
     #[allow(clippy::float_cmp)] // a tick that is the limit is exactly it
     let is_limit = |level: &&f64| limit == Some(**level);
@@ -187,7 +205,7 @@ fn contours(
         })
         .collect();
     for (level, ink, pieces) in drawn.into_iter().rev() {
-        number(canvas, &mut space, level, ink, pieces);
+        number(canvas, space, level, ink, pieces);
     }
 }
 

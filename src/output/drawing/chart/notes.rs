@@ -5,10 +5,11 @@ use super::super::font;
 use super::super::ink::Ink;
 use super::plot::Mark;
 use crate::analysis::Status;
+use crate::model::Basis;
 use crate::output::sweep::labels::Labels;
 use crate::output::sweep::summary;
 use crate::output::words;
-use crate::study::sweep::{PointCase, Sweep, Target, Variable};
+use crate::study::sweep::{Point, PointCase, Sweep, Target, Variable};
 use crate::units::Dimension;
 
 /// Share by which the peak must exceed the ultimate strength to have a curve of its own in words.
@@ -39,9 +40,21 @@ pub(super) fn subject(sweep: &Sweep) -> String {
     format!("Case {}: {}", sweep.shown_name(), varied.join(" and "))
 }
 
+/// Which case decides a point, and by which analysis.
+pub(super) fn deciding(point: &Point) -> Option<(usize, Basis)> {
+    let answer = point.outcome.as_ref().ok()?;
+    let governing = answer.governing?;
+    Some((governing, answer.cases.get(governing)?.verification.as_ref()?.basis))
+}
+
 /// What the utilisation is of: the governing case of a joint may be another than the one shown.
 pub(super) fn utilisation(sweep: &Sweep) -> &'static str {
-    if sweep.cases.len() > 1 { "utilisation of the joint, governing case" } else { "utilisation" }
+    match (sweep.cases.len() > 1, sweep.variables.len() > 1) {
+        (true, true) => "utilisation of the joint, governing case; limit 1 in red",
+        (true, false) => "utilisation of the joint, governing case",
+        (false, true) => "utilisation; limit 1 in red",
+        (false, false) => "utilisation",
+    }
 }
 
 /// Whether the load of the shown case is a force or a moment.
@@ -69,11 +82,18 @@ fn sentences(sweep: &Sweep) -> Vec<String> {
     let counts = [
         count(Status::Satisfied, "satisfied"),
         count(Status::Exceeded, "exceeded"),
-        count(Status::NotSolved, "without an answer"),
+        count(
+            Status::NotSolved,
+            if sweep.variables.len() > 1 {
+                "without an answer (grey)"
+            } else {
+                "without an answer (a cross on the axis)"
+            },
+        ),
     ];
     let counts: Vec<String> = counts.into_iter().flatten().collect();
     let mut sentences = vec![
-        format!("{}; {}", sweep.joint.rules.id, words::law_in_brief(&sweep.joint)),
+        words::basis_in_brief(&sweep.joint),
         format!("{} points: {}.", sweep.points.len(), counts.join(", ")),
     ];
     sentences.extend(summary::sentences(sweep, &Labels::new(sweep)));
@@ -112,7 +132,9 @@ pub(super) fn draw(canvas: &mut Canvas, panel: &Area, sweep: &Sweep) {
         });
     }
     key("utilisation, satisfied", &|canvas, at| Mark::Dot.draw(canvas, at, Ink::TEXT));
-    key("utilisation, exceeded", &|canvas, at| Mark::Ring.draw(canvas, at, Ink::EXCEEDED));
+    if sweep.count(Status::Exceeded) > 0 {
+        key("utilisation, exceeded", &|canvas, at| Mark::Ring.draw(canvas, at, Ink::EXCEEDED));
+    }
     y = heading(canvas, "What it shows", left, right, y);
     for sentence in &sentences(sweep) {
         let lines = font::lines(sentence, SMALL, right - left);

@@ -6,14 +6,14 @@
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text};
 use super::super::font;
 use super::super::ink::Ink;
-use super::super::space::{Label, Space};
+use super::super::space::Space;
 use super::super::view::View;
 use super::subject::{Subject, extremes};
 use crate::model::{Run, Vector};
 use crate::output::number::length;
 
 /// Distance of rows, px.
-pub(super) const ROW: f64 = 27.0;
+pub(super) const ROW: f64 = 38.0;
 /// Half a tick, px.
 const TICK: f64 = 4.5;
 /// Distance of texts from their line, px.
@@ -201,25 +201,23 @@ fn measure(
         Axis::X => base,
         Axis::Y => Text { at: middle - Spot::new(GAP, 0.0), upward: true, ..base },
     };
+    let size = text.area().size();
+    let offset = match axis {
+        Axis::X => Spot::new(0.0, 0.5 * size.y + 2.0),
+        Axis::Y => Spot::new(0.5 * size.x + 2.0, 0.0),
+    };
+    let baseline = match axis {
+        Axis::X => Spot::new(0.0, 0.5 * (font::ASCENT - font::DESCENT) * SMALL),
+        Axis::Y => Spot::new(0.5 * (font::ASCENT - font::DESCENT) * SMALL, 0.0),
+    };
     let fits = width + 10.0 <= (to - from).norm();
-    if fits && space.is_free(&text.area().grown(-3.0)) {
-        space.take(text.area());
-        canvas.text(&text);
-        return;
-    }
-    let direction = match axis {
-        Axis::X => Spot::new(0.0, 1.0),
-        Axis::Y => Spot::new(-1.0, 0.0),
-    };
-    let label = Label {
-        text: Text { anchor: Anchor::Start, upward: false, ..text.clone() },
-        wish: middle,
-        reach: TICK,
-        direction,
-    };
-    if let Some(placed) = space.label(canvas, &label)
-        && placed.led
-    {
-        super::marks::lead(canvas, middle, &placed.area);
+    // On the line; where it is too short, close on the other side of it. A measure without room is left out.
+    let beside = Text { at: middle + offset + baseline, ..text.clone() };
+    for text in [Some(text).filter(|_| fits), Some(beside)].into_iter().flatten() {
+        if space.is_free(&text.area().grown(-3.0)) {
+            space.take(text.area());
+            canvas.text(&text);
+            return;
+        }
     }
 }

@@ -15,6 +15,8 @@ use crate::analysis::{CellForce, ElementRow};
 const LONGEST: (f64, f64, f64) = (0.16, 26.0, 72.0);
 /// Least distance of arrows along a weld, px.
 const SPACING: f64 = 20.0;
+/// Cosine of the angle between force and weld from which arrows would cover each other.
+const MOSTLY_ALONG: f64 = 0.8;
 /// Most arrows of one method.
 const MOST: usize = 160;
 /// Distance at which every weld is down to one arrow, px: the page is narrower.
@@ -39,6 +41,8 @@ pub(super) struct Forces {
     pub(super) arrows: Vec<Force>,
     /// Force per length of the longest arrow, N/mm.
     pub(super) greatest: f64,
+    /// Pieces that have arrows.
+    pub(super) count: usize,
 }
 
 /// The arrows of a case.
@@ -53,8 +57,7 @@ pub(super) fn arrows(subject: &Subject<'_>, view: &View) -> Forces {
     if greatest <= 0.0 {
         return Forces::default();
     }
-    let (share, least, most) = LONGEST;
-    let longest = (share * subject.size() * view.scale).clamp(least, most);
+    let longest = longest(subject, view);
     let arrow = |row: &ElementRow, force: &CellForce, elastic: bool| {
         let direction = on_page(force.force);
         let tail = view.spot(row.at);
@@ -63,22 +66,38 @@ pub(super) fn arrows(subject: &Subject<'_>, view: &View) -> Forces {
     };
     let elastic = chosen.iter().filter_map(|row| arrow(row, &row.elastic, true));
     let ultimate = chosen.iter().filter_map(|row| arrow(row, row.ultimate.as_ref()?, false));
-    Forces { arrows: elastic.chain(ultimate).collect(), greatest }
+    Forces { arrows: elastic.chain(ultimate).collect(), greatest, count: chosen.len() }
+}
+
+/// Length of the longest arrow, px.
+fn longest(subject: &Subject<'_>, view: &View) -> f64 {
+    let (share, least, most) = LONGEST;
+    (share * subject.size() * view.scale).clamp(least, most)
 }
 
 /// The rows that get an arrow: some of every weld as far as the page has room.
 fn chosen<'r>(subject: &Subject<'r>, view: &View) -> Vec<&'r ElementRow> {
     let welds: Vec<&[ElementRow]> = subject.case.elements.chunk_by(|a, b| a.weld == b.weld).collect();
     let stride = welds.len().div_ceil(MOST).max(1);
-    let mut gap = SPACING;
+    let (mut gap, longest) = (SPACING, longest(subject, view));
     loop {
-        let chosen: Vec<&ElementRow> =
-            welds.iter().step_by(stride).flat_map(|rows| evenly(rows, gap / view.scale)).collect();
+        let chosen: Vec<&ElementRow> = welds
+            .iter()
+            .step_by(stride)
+            .flat_map(|rows| evenly(rows, (gap + along(rows) * longest) / view.scale))
+            .collect();
         if chosen.len() <= MOST || gap > FEWEST {
             return chosen;
         }
         gap *= 1.5;
     }
+}
+
+/// How far arrows lie along their weld: the mean cosine, from where they would cover each other.
+fn along(rows: &[ElementRow]) -> f64 {
+    let cosines: Vec<f64> = rows.iter().filter_map(|row| row.angle).map(f64::cos).collect();
+    let mean = cosines.iter().sum::<f64>() / super::super::ink::as_float(cosines.len().max(1));
+    if mean > MOSTLY_ALONG { mean } else { 0.0 }
 }
 
 /// Rows of one weld about `gap` mm apart, at least one.

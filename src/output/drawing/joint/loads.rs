@@ -5,6 +5,7 @@
 
 use super::super::arrow::Arrow;
 use super::super::canvas::{Area, Canvas, SMALL, Spot, Stroke, Text};
+use super::super::font;
 use super::super::ink::Ink;
 use super::super::space::{Label, Space, clipped};
 use super::super::view::{View, on_page};
@@ -17,6 +18,11 @@ use crate::units::Dimension;
 pub(super) const LENGTHS: (f64, f64) = (84.0, 38.0);
 /// Radius of the arrow of a moment, px.
 const TURN: f64 = 22.0;
+
+/// Longest words of a load, px.
+const LONGEST_NAME: f64 = 330.0;
+/// Least room for a name in them, px.
+const SHORTEST_NAME: f64 = 60.0;
 
 const LOAD: Arrow = Arrow { ink: Ink::LOAD, width: 3.0, head: 13.0 };
 
@@ -31,24 +37,47 @@ fn resultant_is_shown(subject: &Subject<'_>) -> bool {
     loads.len() > 1 && subject.case.load.force.norm() > 0.0
 }
 
-/// Draws the loads and takes their place.
-pub(super) fn draw(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view: &View) {
+/// Draws the loads and takes their place; the words of those that have none at them.
+pub(super) fn draw(
+    canvas: &mut Canvas,
+    space: &mut Space,
+    subject: &Subject<'_>,
+    view: &View,
+) -> Vec<String> {
     line_of_action(canvas, space, subject, view);
     let loads = drawn(subject);
+    let mut unsaid = Vec::new();
     let greatest = loads.iter().map(|load| load.wrench.force.norm()).fold(0.0, f64::max);
     for load in &loads {
         let size = load.wrench.force.norm();
         if size > 0.0 {
             let length = LENGTHS.1 + (LENGTHS.0 - LENGTHS.1) * size / greatest;
-            force(canvas, space, subject, view, load, length);
+            unsaid.extend(force(canvas, space, subject, view, load, length));
         }
         if load.wrench.moment.z.abs() > 0.0 {
-            moment(canvas, space, subject, view, load);
+            unsaid.extend(moment(canvas, space, subject, view, load));
         }
     }
     if loads.is_empty() || (resultant_is_shown(subject) && greatest <= 0.0) {
         resultant(canvas, space, subject, view);
+        unsaid = subject.applied().loads.iter().map(|load| in_words(subject, load)).collect();
     }
+    unsaid
+}
+
+/// A load with its case, size and place.
+fn in_words(subject: &Subject<'_>, load: &AppliedLoad) -> String {
+    let units = subject.joint().units;
+    let mut parts = Vec::new();
+    if load.wrench.force.norm() > 0.0 {
+        let at = load.wrench.reference;
+        let force = point(units, Dimension::Force, &[load.wrench.force.x, load.wrench.force.y]);
+        parts.push(format!("{force} at {}", point(units, Dimension::Length, &[at.x, at.y])));
+    }
+    if load.wrench.moment.z.abs() > 0.0 {
+        parts.push(quantity(units, Dimension::Moment, load.wrench.moment.z));
+    }
+    format!("{}: {}", name(load), parts.join(" and "))
 }
 
 /// What a load is called: factor and case.
@@ -64,7 +93,7 @@ fn force(
     view: &View,
     load: &AppliedLoad,
     length: f64,
-) {
+) -> Option<String> {
     let units = subject.joint().units;
     let unit = on_page(load.wrench.force).normalize();
     let size = quantity(units, Dimension::Force, load.wrench.force.norm());
@@ -75,12 +104,10 @@ fn force(
     LOAD.draw(canvas, tail, tip);
     canvas.circle(tail, 3.4, Some(Ink::LOAD), None);
     space.take_along(tail, tip, 5.0);
-    let mut words = format!("{}: {size}", name(load));
-    if !near {
-        let place = point(units, Dimension::Length, &[at.x, at.y]);
-        words = format!("{words} at {place}");
-    }
-    say(canvas, space, &words, (tail + tip) / 2.0, 6.0, beside(unit));
+    let value =
+        if near { size } else { format!("{size} at {}", point(units, Dimension::Length, &[at.x, at.y])) };
+    let said = say(canvas, space, &name(load), &value, (tail + tip) / 2.0, 6.0, beside(unit));
+    (!said).then(|| in_words(subject, load))
 }
 
 /// A place at the rim of the drawing for a load that acts far off, in its direction from the group.
@@ -96,14 +123,21 @@ fn rim(space: &Space, view: &View, subject: &Subject<'_>, at: Vector, arrow: Spo
     clamped - arrow
 }
 
-fn moment(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view: &View, load: &AppliedLoad) {
+fn moment(
+    canvas: &mut Canvas,
+    space: &mut Space,
+    subject: &Subject<'_>,
+    view: &View,
+    load: &AppliedLoad,
+) -> Option<String> {
     let units = subject.joint().units;
     let placed = load.placed && subject.is_near(load.wrench.reference);
     let at = view.spot(if placed { load.wrench.reference } else { subject.centroid() });
     LOAD.turn(canvas, at, TURN, load.wrench.moment.z > 0.0);
     space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
     let size = quantity(units, Dimension::Moment, load.wrench.moment.z.abs());
-    say(canvas, space, &format!("{}: {size}", name(load)), at, TURN, Spot::new(1.0, -1.0));
+    let said = say(canvas, space, &name(load), &size, at, TURN, Spot::new(1.0, -1.0));
+    (!said).then(|| in_words(subject, load))
 }
 
 /// The sum of all loads, where they are too many to be drawn.
@@ -123,19 +157,13 @@ fn resultant(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view
             subject.applied().loads.len(),
             quantity(units, Dimension::Force, size)
         );
-        say(canvas, space, &words, tail + unit * (0.5 * LENGTHS.0), 6.0, beside(unit));
+        say(canvas, space, "", &words, tail + unit * (0.5 * LENGTHS.0), 6.0, beside(unit));
     } else if load.moment.z.abs() > 0.0 {
         let at = view.spot(subject.centroid());
         LOAD.turn(canvas, at, TURN, load.moment.z > 0.0);
         space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
-        say(
-            canvas,
-            space,
-            &quantity(units, Dimension::Moment, load.moment.z.abs()),
-            at,
-            TURN,
-            Spot::new(1.0, -1.0),
-        );
+        let size = quantity(units, Dimension::Moment, load.moment.z.abs());
+        say(canvas, space, "", &size, at, TURN, Spot::new(1.0, -1.0));
     }
 }
 
@@ -159,7 +187,7 @@ fn line_of_action(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>,
         let words =
             format!("resultant {}", quantity(units, Dimension::Force, subject.case.load.force.norm()));
         let up = if along.y < 0.0 { to } else { from };
-        say(canvas, space, &words, up, 2.0, Spot::new(0.3, -1.0));
+        say(canvas, space, "", &words, up, 2.0, Spot::new(0.3, -1.0));
     }
     let centroid = view.spot(subject.centroid());
     canvas.line(centroid, at, Stroke::solid(Ink::QUIET, 1.0));
@@ -185,13 +213,23 @@ fn beside(unit: Spot) -> Spot {
     Spot::new(unit.y.abs() + 1e-3, -unit.x.abs())
 }
 
-fn say(canvas: &mut Canvas, space: &mut Space, words: &str, wish: Spot, reach: f64, direction: Spot) {
-    let room = 0.6 * space.frame().size().x;
-    let words = super::super::font::clipped(words, SMALL, room);
+/// Puts a name and a value; the name is cut where it is long, the value never. Whether there was room.
+fn say(
+    canvas: &mut Canvas,
+    space: &mut Space,
+    name: &str,
+    value: &str,
+    wish: Spot,
+    reach: f64,
+    direction: Spot,
+) -> bool {
+    let room = LONGEST_NAME - font::width(value, SMALL);
+    let name = font::clipped(name, SMALL, room.max(SHORTEST_NAME));
+    let words = if name.is_empty() { value.to_owned() } else { format!("{name}: {value}") };
     let text = Text { size: SMALL, ink: Ink::LOAD, ..Text::new(&words, Spot::zeros()) };
-    if let Some(placed) = space.label(canvas, &Label { text, wish, reach, direction })
-        && placed.led
-    {
+    let placed = space.label(canvas, &Label { text, wish, reach, direction });
+    if let Some(placed) = placed.filter(|placed| placed.led) {
         super::marks::lead(canvas, wish, &placed.area);
     }
+    placed.is_some()
 }

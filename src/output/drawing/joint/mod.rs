@@ -9,13 +9,15 @@
 //! | loads, line of action, eccentricity | `loads.rs` |
 //! | centroid, centre of rotation, critical points | `marks.rs` |
 //! | measures | `dimensions.rs` |
-//! | numbers, key, remarks | `panel.rs` |
+//! | numbers, verdict, remarks; key | `panel.rs`, `key.rs`, `column.rs` |
 //!
 //! The drawing is made twice: first to learn how far the arrows reach on the page, then with room for them.
 
 mod bands;
+mod column;
 mod dimensions;
 mod forces;
+mod key;
 mod loads;
 mod marks;
 mod panel;
@@ -25,25 +27,26 @@ mod welds;
 use super::canvas::{Area, Canvas, Spot};
 use super::sheet;
 use super::space::Space;
-use super::view::{Need, View};
+use super::view::View;
 use crate::analysis::{CaseReport, Report};
 use crate::output::number::length;
 use crate::output::words;
 use crate::solvers::Ultimate;
 use dimensions::Dimensions;
 use forces::Forces;
+use panel::Notes;
 use subject::Subject;
 
 /// Size of the page, px.
-const PAGE: (f64, f64) = (1200.0, 812.0);
+const PAGE: (f64, f64) = (1200.0, 880.0);
 /// Where the group is drawn.
-const FRAME: [f64; 4] = [24.0, 98.0, 838.0, 770.0];
+const FRAME: [f64; 4] = [24.0, 98.0, 838.0, 820.0];
 /// Where the numbers stand.
-const PANEL: [f64; 4] = [852.0, 98.0, 1176.0, 770.0];
+const PANEL: [f64; 4] = [852.0, 98.0, 1176.0, 820.0];
 /// Room around the group for labels, px.
 const MARGIN: f64 = 34.0;
-/// Room around loads and centre, px.
-const AROUND: f64 = 62.0;
+/// Room around the centre of rotation for its mark, px.
+const MARK: f64 = 13.0;
 
 /// A case of a report as an SVG drawing.
 #[must_use]
@@ -68,18 +71,18 @@ fn drawn(report: &Report, case: &CaseReport) -> Canvas {
     let frame = Area::new(FRAME[0], FRAME[1], FRAME[2], FRAME[3]);
     let (view, forces, dimensions, group) = laid_out(&subject, &frame);
     let mut space = Space::new(frame);
-    let mut remarks = Vec::new();
+    let mut notes = Notes::default();
     bands::draw(&mut canvas, &mut space, &subject, &view);
     forces::draw(&mut canvas, &mut space, &forces);
     marks::draw(&mut canvas, &mut space, &subject, &view);
     dimensions.draw(&mut canvas, &mut space, &subject, &view, &group);
-    loads::draw(&mut canvas, &mut space, &subject, &view);
-    remarks.extend(marks::label(&mut canvas, &mut space, &subject, &view));
+    notes.loads = loads::draw(&mut canvas, &mut space, &subject, &view);
+    notes.remarks.extend(marks::label(&mut canvas, &mut space, &subject, &view));
     let missed = welds::label(&mut canvas, &mut space, &subject, &view);
-    remarks.extend(self::remarks(&subject, &view, missed));
+    notes.remarks.extend(remarks(&subject, &view, missed));
     let panel = Area::new(PANEL[0], PANEL[1], PANEL[2], PANEL[3]);
-    panel::draw(&mut canvas, &panel, &subject, &forces, &remarks);
-    sheet::foot(&mut canvas);
+    panel::draw(&mut canvas, &panel, &subject, &forces, &notes);
+    sheet::foot(&mut canvas, &report.joint);
     canvas
 }
 
@@ -88,17 +91,21 @@ fn laid_out(subject: &Subject<'_>, frame: &Area) -> (View, Forces, Dimensions, A
     let dimensions = Dimensions::of(subject);
     let (before, after) = dimensions.room();
     let margin = Spot::new(MARGIN, MARGIN);
-    let around = Spot::new(AROUND, AROUND);
     let about = subject.centroid();
-    let first = View::fit(&subject.needs(before + margin, after + margin, around), about, frame);
+    let first = View::fit(&subject.needs(before + margin, after + margin), about, frame);
     let (before_arrows, after_arrows) = overhang(subject, &first, &forces::arrows(subject, &first));
-    let needs: Vec<Need> =
-        subject.needs(before + before_arrows + margin * 0.6, after + after_arrows + margin * 0.6, around);
+    let room = margin * 0.6;
+    let needs = subject.needs(before + before_arrows + room, after + after_arrows + room);
     let view = View::fit(&needs, about, frame);
     let forces = forces::arrows(subject, &view);
     let (before, after) = overhang(subject, &view, &forces);
     let (one, other) = (view.spot(subject.least), view.spot(subject.most));
-    let group = Area { least: one.inf(&other) - before, most: one.sup(&other) + after };
+    let mut group = Area { least: one.inf(&other) - before, most: one.sup(&other) + after };
+    // Measures keep off the centre of rotation, lest they seem to lead to it.
+    if let Some(centre) = subject.near_centre() {
+        let mark = Area::around(view.spot(centre), Spot::new(2.0 * MARK, 2.0 * MARK));
+        group = Area { least: group.least.inf(&mark.least), most: group.most.sup(&mark.most) };
+    }
     (view, forces, dimensions, group)
 }
 
@@ -139,12 +146,15 @@ fn remarks(subject: &Subject<'_>, view: &View, missed: usize) -> Vec<String> {
         let noun = if missed == 1 { "weld has" } else { "welds have" };
         remarks.push(format!("{missed} {noun} no size at it for want of room."));
     }
+    if subject.report.deciding_case().is_some_and(|case| !std::ptr::eq(case, subject.case)) {
+        remarks.push("Another case decides the joint; the verdict above is the joint's.".to_owned());
+    }
     let far = subject
         .applied()
         .loads
         .iter()
         .filter(|load| load.wrench.force.norm() > 0.0 && !subject.is_near(load.wrench.reference));
-    if far.count() > 0 {
+    if subject.draws_each_load() && far.count() > 0 {
         let distance = length(joint.units, subject.size());
         remarks.push(format!("A load far from the group ({distance} across) is drawn at the rim."));
     }

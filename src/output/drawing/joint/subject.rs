@@ -1,7 +1,7 @@
 //! What is drawn of a joint: its extent, the loads of the case, and which of the far points are on the drawing.
 
 use super::super::canvas::Spot;
-use super::super::view::Need;
+use super::super::view::{Need, on_page};
 use crate::analysis::{CaseReport, Report};
 use crate::model::{Joint, Run, Vector};
 use crate::solvers::{State, Ultimate};
@@ -9,7 +9,9 @@ use crate::solvers::{State, Ultimate};
 /// A load may lie this many sizes of the group outside it and still be drawn in place.
 const LOADS_WITHIN: f64 = 1.7;
 /// The same for the centre of rotation.
-const CENTRE_WITHIN: f64 = 0.9;
+const CENTRE_WITHIN: f64 = 0.65;
+/// Room around a load for its words, px.
+const LABEL_ROOM: f64 = 34.0;
 /// Up to this many loads each has its own arrow; more are drawn as their resultant.
 const MOST_LOADS: usize = 6;
 /// Share of a moment below which a moment about the centroid counts as none.
@@ -118,12 +120,24 @@ impl<'r> Subject<'r> {
         })
     }
 
-    /// What must be seen, with equal room around every point.
-    pub(super) fn needs(&self, before: Spot, after: Spot, around: Spot) -> Vec<Need> {
+    /// What must be seen: the welds' box and the centre with room before and after them, the loads with their arrows.
+    pub(super) fn needs(&self, before: Spot, after: Spot) -> Vec<Need> {
         let mut needs = vec![Need { at: self.least, before, after }, Need { at: self.most, before, after }];
-        let mut others = self.near_loads();
-        others.extend(self.near_centre());
-        needs.extend(others.into_iter().map(|at| Need { at, before: around, after: around }));
+        needs.extend(self.near_centre().map(|at| Need { at, before, after }));
+        let around = Spot::new(LABEL_ROOM, LABEL_ROOM);
+        for at in self.near_loads() {
+            let forces = self.applied().loads.iter().map(|load| load.wrench);
+            let there = forces.filter(|load| (load.reference - at).norm() <= NOTHING * self.size());
+            let mut need = Need { at, before: around, after: around };
+            for force in there.map(|load| load.force).chain([self.case.load.force]) {
+                if force.norm() > 0.0 {
+                    let arrow = on_page(force).normalize() * (super::loads::LENGTHS.0 + 8.0);
+                    need.before = need.before.sup(&-arrow);
+                    need.after = need.after.sup(&arrow);
+                }
+            }
+            needs.push(need);
+        }
         needs
     }
 }

@@ -7,25 +7,32 @@ use super::bands;
 use super::marks;
 use super::subject::Subject;
 use crate::model::{Joint, Run, Vector, Weld};
-use crate::output::number::length;
+use crate::output::number::{degrees, leg, length};
+use std::f64::consts::FRAC_PI_2;
 
 /// Up to this many welds each has its name at it.
 const NAMED: usize = 8;
 /// Up to this many welds each has its size at it.
 const LABELLED: usize = 60;
+/// Deviation from a right angle that is told, rad.
+const SQUARE: f64 = 1e-6;
 /// Runs of a weld beside which a label is tried.
 const RUNS_TRIED: usize = 4;
 
 /// The size of a weld in words.
 pub(super) fn size(weld: &Weld, joint: &Joint) -> String {
-    let own = |value: f64| length(joint.units, value);
+    let own = |value: f64| leg(joint.units, value);
     let size = match weld.size.legs() {
         #[allow(clippy::float_cmp)] // equal as given; nothing is computed
         Some([first, second]) if first == second => format!("leg {}", own(first)),
         Some([first, second]) => format!("legs {} / {}", own(first), own(second)),
-        None => format!("throat {}", own(weld.size.throat())),
+        None => format!("throat {}", length(joint.units, weld.size.throat())),
     };
-    if weld.sides == 2 { format!("{size}, both sides") } else { size }
+    let dihedral = weld.size.dihedral();
+    let skew = (dihedral - FRAC_PI_2).abs() > SQUARE;
+    let angle = if skew { format!(" at {}", degrees(dihedral)) } else { String::new() };
+    let sides = if weld.sides == 2 { ", both sides" } else { "" };
+    format!("{size}{angle}{sides}")
 }
 
 /// The radius of a weld that is one arc, in words.

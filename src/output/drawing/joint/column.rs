@@ -1,0 +1,86 @@
+//! A column of headings, sentences and symbols, written from top to bottom.
+
+use super::super::canvas::{BODY, Canvas, SMALL, Spot, Stroke, Text};
+use super::super::font;
+use super::super::ink::{Ink, as_float};
+
+/// Distance of rows, px.
+pub(super) const ROW: f64 = 22.0;
+/// Height of a heading of one line, px.
+pub(super) const HEADING: f64 = BODY + 22.0;
+
+/// Writes from top to bottom.
+pub(super) struct Column<'c> {
+    pub(super) canvas: &'c mut Canvas,
+    pub(super) left: f64,
+    pub(super) right: f64,
+    /// Where the next thing begins.
+    pub(super) y: f64,
+    pub(super) bottom: f64,
+}
+
+impl Column<'_> {
+    pub(super) fn room(&self) -> f64 {
+        self.right - self.left
+    }
+
+    /// A heading of up to two lines.
+    pub(super) fn heading(&mut self, words: &str) {
+        self.y += 10.0;
+        let mut lines = font::lines(words, BODY, self.room());
+        if lines.len() > 2 {
+            lines.truncate(1);
+            let rest =
+                words.split_whitespace().skip(lines[0].split(' ').count()).collect::<Vec<_>>().join(" ");
+            lines.push(font::clipped(&rest, BODY, self.room()));
+        }
+        self.canvas.lines(&lines, Spot::new(self.left, self.y + BODY), BODY, Ink::TEXT);
+        self.y += font::LEADING * BODY * (as_float(lines.len()) - 1.0) + BODY + 7.0;
+        self.canvas.line(
+            Spot::new(self.left, self.y),
+            Spot::new(self.right, self.y),
+            Stroke::solid(Ink::HAIR, 1.0),
+        );
+        self.y += 5.0;
+    }
+
+    /// A sentence in small letters, as many lines of it as fit; false when some were left out.
+    pub(super) fn sentence(&mut self, words: &str, ink: Ink) -> bool {
+        for line in font::lines(words, SMALL, self.room()) {
+            if self.y + font::LEADING * SMALL > self.bottom {
+                return false;
+            }
+            self.canvas.text(&Text {
+                size: SMALL,
+                ink,
+                ..Text::new(&line, Spot::new(self.left, self.y + SMALL))
+            });
+            self.y += font::LEADING * SMALL;
+        }
+        self.y += 3.0;
+        true
+    }
+
+    /// One line in small letters, cut where it is too long.
+    pub(super) fn line(&mut self, words: &str, ink: Ink) {
+        let words = font::clipped(words, SMALL, self.room());
+        self.sentence(&words, ink);
+    }
+
+    /// A symbol with its meaning, and where it stands.
+    pub(super) fn key(&mut self, words: &str, place: Option<&str>, symbol: impl FnOnce(&mut Canvas, Spot)) {
+        let middle = self.y + 0.5 * ROW;
+        symbol(self.canvas, Spot::new(self.left + 24.0, middle));
+        let at = Spot::new(self.left + 58.0, middle + 0.5 * font::CAPITALS * SMALL);
+        let room = self.right - at.x;
+        let words = font::clipped(words, SMALL, room);
+        self.canvas.text(&Text { size: SMALL, ..Text::new(&words, at) });
+        self.y += ROW;
+        if let Some(place) = place {
+            let place = font::clipped(place, SMALL, room);
+            let at = at + Spot::new(0.0, 1.25 * SMALL);
+            self.canvas.text(&Text { size: SMALL, ink: Ink::QUIET, ..Text::new(&place, at) });
+            self.y += 1.25 * SMALL;
+        }
+    }
+}
