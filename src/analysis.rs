@@ -11,7 +11,7 @@ mod pipeline;
 pub use crate::mechanics::Section;
 pub use crate::verify::{Check, Demand, Verification};
 pub use comparison::{Coefficients, Strength};
-pub use pipeline::{analyse, analyse_with, governing};
+pub use pipeline::{analyse, analyse_with, analyse_without_elements, governing};
 
 use crate::model::{Joint, Vector, Wrench};
 use crate::solvers::{Elastic, NotSolved, Ultimate};
@@ -43,6 +43,8 @@ pub struct CellForce {
 pub struct ElementRow {
     /// Index of the weld.
     pub weld: usize,
+    /// Index of the run in its weld.
+    pub run: usize,
     /// Number of the element in its weld, from 1.
     pub element: usize,
     /// Middle of the element, mm.

@@ -41,6 +41,7 @@ pub(super) fn rows(
         let strength = joint.rules.longitudinal.value * weld.filler.strength;
         ElementRow {
             weld: cell.weld,
+            run: group.pieces[cell.piece].run,
             element: cell.number,
             at: cell.at,
             length: cell.length,

@@ -23,6 +23,7 @@ const NOTABLE_PEAK: f64 = 1e-3;
 pub(super) fn of(joint: &Joint, cases: &[CaseReport]) -> Vec<Finding> {
     let mut findings: Vec<Finding> = cases.iter().flat_map(about_case).collect();
     findings.extend(cases.iter().filter_map(|case| nearly_concentric(joint, case)));
+    findings.extend(cases.iter().filter_map(rests_on_concentricity));
     findings.extend(about_welds(joint));
     findings.extend(about_rules(joint));
     findings.extend(about_loads(joint));
@@ -85,6 +86,22 @@ fn about_case(case: &CaseReport) -> Vec<Finding> {
         Some(_) => {}
     }
     findings
+}
+
+/// A verdict that holds by a rule for concentric loads and would not hold a little beside the centroid.
+fn rests_on_concentricity(case: &CaseReport) -> Option<Finding> {
+    let rule = case.governing_check().filter(|check| check.basis == Basis::Concentric && check.satisfied)?;
+    let other = case.checks.iter().filter(|check| check.accepted && check.basis != Basis::Concentric);
+    let other =
+        other.min_by(|a, b| a.utilisation.total_cmp(&b.utilisation)).filter(|check| !check.satisfied)?;
+    let message = format!(
+        "satisfied by a rule for loads through the centroid alone (`{}`); by `{}`, which holds beside it as well, the \
+         utilisation is {:.3}",
+        rule.id,
+        other.id,
+        (other.utilisation * 1e3).ceil() / 1e3
+    );
+    Some(finding(Grade::Caution, &case.name, message))
 }
 
 #[allow(clippy::float_cmp)] // sizes and strengths differ when they are given differently

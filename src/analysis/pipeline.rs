@@ -14,14 +14,25 @@ pub fn analyse(joint: &Joint) -> Report {
     analyse_with(joint, &UltimateSettings::default())
 }
 
+/// Analyses every case of a joint with the default settings and leaves the element tables empty: for many cases,
+/// of which they would fill the memory.
+#[must_use]
+pub fn analyse_without_elements(joint: &Joint) -> Report {
+    analysed(joint, &UltimateSettings::default(), false)
+}
+
 /// Analyses every case of a joint.
 #[must_use]
 pub fn analyse_with(joint: &Joint, settings: &UltimateSettings) -> Report {
+    analysed(joint, settings, true)
+}
+
+fn analysed(joint: &Joint, settings: &UltimateSettings, with_elements: bool) -> Report {
     let longitudinal = joint.rules.longitudinal.value;
     let group = PlaneGroup::new(&joint.group, &joint.law, longitudinal, joint.discretisation);
     let solver = UltimateSolver::new(&group, settings.clone());
     let cases: Vec<CaseReport> =
-        joint.cases.iter().map(|case| case_report(joint, &group, &solver, case)).collect();
+        joint.cases.iter().map(|case| case_report(joint, &group, &solver, case, with_elements)).collect();
     let findings = findings::of(joint, &cases);
     Report { joint: joint.clone(), section: group.section, governing: governing(&cases), cases, findings }
 }
@@ -31,6 +42,7 @@ fn case_report(
     group: &PlaneGroup,
     solver: &UltimateSolver<'_>,
     case: &LoadCase,
+    with_elements: bool,
 ) -> CaseReport {
     let rules = &joint.rules;
     let load = case.wrench.about(group.section.centroid);
@@ -65,7 +77,7 @@ fn case_report(
         Some(_) => Status::Exceeded,
     };
     let state = ultimate.as_ref().ok().map(crate::solvers::Ultimate::governing);
-    let elements = elements::rows(joint, group, state, &elastic);
+    let elements = if with_elements { elements::rows(joint, group, state, &elastic) } else { Vec::new() };
     let analyses = Analyses::Loaded { ultimate, elastic };
     CaseReport { name: case.name.clone(), load, status, verification, analyses, checks, elements }
 }

@@ -127,6 +127,7 @@ fn element(weld: usize, x: f64, share: f64) -> ElementRow {
     };
     ElementRow {
         weld,
+        run: 0,
         element: 1,
         at: Vector::new(x, 50.0, 0.0),
         length: 100.0,

@@ -67,6 +67,12 @@ impl Area {
     }
 }
 
+/// A small count as a number.
+pub(super) fn as_float(count: usize) -> f64 {
+    // Counts of a drawing are far below 2^32.
+    u32::try_from(count).map_or(f64::INFINITY, f64::from)
+}
+
 /// How a line is drawn.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) struct Stroke {
@@ -242,7 +248,7 @@ impl Canvas {
         let (width, height) = (coordinate(self.size.x), coordinate(self.size.y));
         format!(
             "<svg xmlns=\"http://www.w3.org/2000/svg\" viewBox=\"0 0 {width} {height}\" width=\"{width}\" \
-             height=\"{height}\" role=\"img\" font-family=\"{}\">\n<title>{}</title>\n<desc>{}</desc>\n\
+             height=\"{height}\" role=\"img\" xml:space=\"preserve\" font-family=\"{}\">\n<title>{}</title>\n<desc>{}</desc>\n\
              <rect width=\"{width}\" height=\"{height}\" fill=\"#ffffff\"/>\n{}</svg>\n",
             font::FAMILY,
             escaped(title),

@@ -2,7 +2,7 @@
 //!
 //! Every text is measured with the font embedded here, whose advances add up without kerning. PNG files are
 //! rendered with it; SVG files name it and fix the length of each text, so that a drawing keeps its spacing
-//! where another font takes its place. Character without glyph: see [`ADVANCE_OF_UNKNOWN`].
+//! where another font takes its place. A character without glyph counts as a full square.
 
 use std::sync::OnceLock;
 use ttf_parser::Face;
@@ -34,27 +34,33 @@ fn face() -> &'static Face<'static> {
 pub(super) fn width(text: &str, size: f64) -> f64 {
     let face = face();
     let per_em = f64::from(face.units_per_em());
-    let advance = |letter: char| {
-        let glyph = face.glyph_index(letter).and_then(|glyph| face.glyph_hor_advance(glyph));
-        glyph.map_or(ADVANCE_OF_UNKNOWN, |units| f64::from(units) / per_em)
-    };
-    text.chars().map(advance).sum::<f64>() * size
+    text.chars().map(|letter| advance(face, per_em, letter)).sum::<f64>() * size
+}
+
+/// Advance of a letter over the size; a control character counts as the blank that it is written as.
+fn advance(face: &Face<'_>, per_em: f64, letter: char) -> f64 {
+    let letter = if letter.is_whitespace() { ' ' } else { letter };
+    let glyph = face.glyph_index(letter).and_then(|glyph| face.glyph_hor_advance(glyph));
+    glyph.map_or(ADVANCE_OF_UNKNOWN, |units| f64::from(units) / per_em)
 }
 
 /// Lines of a text no wider than `room` px; a word that is wider than that is cut with an ellipsis.
 pub(super) fn lines(text: &str, size: f64, room: f64) -> Vec<String> {
     let mut lines = Vec::new();
     let mut line = String::new();
+    let (mut used, blank) = (0.0, width(" ", size));
     for word in text.split_whitespace() {
-        let longer = if line.is_empty() { word.to_owned() } else { format!("{line} {word}") };
-        if width(&longer, size) <= room {
-            line = longer;
+        let own = width(word, size);
+        if !line.is_empty() && used + blank + own <= room {
+            line = line + " " + word;
+            used += blank + own;
             continue;
         }
         if !line.is_empty() {
             lines.push(std::mem::take(&mut line));
         }
         line = clipped(word, size, room);
+        used = own;
     }
     if !line.is_empty() {
         lines.push(line);
@@ -67,10 +73,15 @@ pub(super) fn clipped(text: &str, size: f64, room: f64) -> String {
     if width(text, size) <= room {
         return text.to_owned();
     }
-    let mut kept: String = text.to_owned();
-    while !kept.is_empty() && width(&kept, size) + width("…", size) > room {
-        kept.pop();
-    }
+    let face = face();
+    let per_em = f64::from(face.units_per_em());
+    let room = room - width("…", size);
+    let mut used = 0.0;
+    let fits = |letter: &char| {
+        used += advance(face, per_em, *letter) * size;
+        used <= room
+    };
+    let kept: String = text.chars().take_while(fits).collect();
     kept.trim_end().to_owned() + "…"
 }
 

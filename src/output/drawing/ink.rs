@@ -5,6 +5,8 @@
 //!
 //! Lightness: `L = 0.2126 R' + 0.7152 G' + 0.0722 B'` of the linear components. Source: IEC 61966-2-1 (sRGB).
 
+use super::canvas::as_float;
+
 /// A colour in sRGB.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub(super) struct Ink(pub(super) [u8; 3]);
@@ -72,12 +74,6 @@ pub(super) fn ramp(share: f64) -> Ink {
         below += 1;
     }
     RAMP[below].mixed(RAMP[below + 1], place - as_float(below))
-}
-
-/// A small count as a number.
-pub(super) fn as_float(count: usize) -> f64 {
-    // Counts of a drawing are far below 2^32.
-    u32::try_from(count).map_or(f64::INFINITY, f64::from)
 }
 
 #[cfg(test)]

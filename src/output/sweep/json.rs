@@ -95,6 +95,7 @@ struct JumpJson<'a> {
     at: Pair,
     load_factor: Pair,
     strength: Pair,
+    in_moment: bool,
 }
 
 /// A sweep, or the faults that stand in its way, as a JSON document.
@@ -202,6 +203,7 @@ impl<'a> JumpJson<'a> {
             at: Pair::from(jump.at),
             load_factor: Pair::from(jump.load_factor),
             strength: Pair::from(jump.strength.map(|strength| strength.size)),
+            in_moment: jump.strength[0].in_moment,
         }
     }
 }

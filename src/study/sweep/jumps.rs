@@ -4,14 +4,14 @@
 //! vanishes (a fold), the smallest can change at once: a jump, which a line through points would hide.
 //!
 //! An interval between neighbours is suspicious when their numbers of states differ, a search was incomplete, or
-//! its change of `ln lambda` is out of proportion (of few intervals: notable); with one variable also when one
+//! its change of `ln R` is out of proportion (of few intervals: notable); with one variable also when one
 //! end has several states. It is halved again and again, keeping the half of larger change. After n halvings a
 //! continuous strength leaves `2^-n` of the whole change, and `2^(-n/2)` at the vertical tangent of a fold; a
 //! jump leaves itself.
 //!
 //! | symbol | code | unit | meaning |
 //! |---|---|---|---|
-//! | lambda | `load_factor` | - | nominal load factor of the ultimate method |
+//! | R | `strength` | N, N mm | nominal ultimate strength as the size of the load, finite also for no load |
 //! | n | `halvings` | - | halvings made |
 //!
 //! Limits: of several jumps within one interval the one is located that the larger changes lead to; jumps of
@@ -26,7 +26,7 @@ use crate::analysis::Demand;
 const HALVINGS: usize = 20;
 /// Halvings with two variables, of which there are many more intervals.
 const HALVINGS_OF_TWO: usize = 8;
-/// Smallest jump of `ln lambda` that is reported: below the accuracy of any weld's strength.
+/// Smallest jump of `ln R` that is reported: below the accuracy of any weld's strength.
 const SMALLEST: f64 = 1e-3;
 /// A jump must leave this many times what the tangent of a fold leaves.
 const BEYOND_A_FOLD: f64 = 4.0;
@@ -58,7 +58,7 @@ impl Jump {
     /// Change of the strength from the first side to the second, over the first.
     #[must_use]
     pub fn relative_change(&self) -> f64 {
-        self.load_factor[1] / self.load_factor[0] - 1.0
+        self.strength[1].size / self.strength[0].size - 1.0
     }
 }
 
@@ -86,12 +86,12 @@ struct Interval {
     variable: usize,
     points: [usize; 2],
     sides: [Side; 2],
-    /// Change of `ln lambda` between the points.
+    /// Change of `ln R` between the points.
     whole: f64,
 }
 
 fn change(sides: &[Side; 2]) -> f64 {
-    (sides[1].load_factor / sides[0].load_factor).ln().abs()
+    (sides[1].strength.size / sides[0].strength.size).ln().abs()
 }
 
 fn shown_case(point: &Point, shown: usize) -> Option<&PointCase> {
@@ -143,6 +143,10 @@ fn suspicious(task: &Task<'_>, points: &[Point], shown: usize, variable: usize) 
         .filter_map(|pair| {
             let [a, b] = pair.map(|index| Side::new(&points[index], shown, variable));
             let sides = [a?, b?];
+            // A force and a moment cannot be compared.
+            if sides[0].strength.in_moment != sides[1].strength.in_moment {
+                return None;
+            }
             Some(Interval { variable, points: pair, whole: change(&sides), sides })
         })
         .collect();
@@ -181,6 +185,9 @@ fn middle(interval: &Interval, beside: &Point) -> Vec<f64> {
 /// The half of larger change; `None` where the middle has no answer or cannot be told from the ends.
 fn halved(interval: Interval, middle: &Point, shown: usize) -> Option<Interval> {
     let middle = Side::new(middle, shown, interval.variable)?;
+    if middle.strength.in_moment != interval.sides[0].strength.in_moment {
+        return None;
+    }
     let [first, second] = [[interval.sides[0], middle], [middle, interval.sides[1]]];
     let sides = if change(&first) > change(&second) { first } else { second };
     Some(Interval { sides, ..interval })

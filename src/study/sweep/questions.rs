@@ -116,6 +116,33 @@ impl Sweep {
         self.points.iter().map(Point::status).max().unwrap_or(Status::Satisfied)
     }
 
+    /// Whether the load of the shown case is a moment at most of its points, rather than a force.
+    #[must_use]
+    pub fn in_moment(&self) -> bool {
+        let demands = || self.points.iter().filter_map(|point| self.shown_case(point)?.demand);
+        2 * demands().filter(|demand| demand.in_moment).count() > demands().count()
+    }
+
+    /// At how many points the shown case is loaded in the other measure.
+    #[must_use]
+    pub fn in_other_measure(&self) -> usize {
+        let in_moment = self.in_moment();
+        let demands = self.points.iter().filter_map(|point| self.shown_case(point)?.demand);
+        demands.filter(|demand| demand.in_moment != in_moment).count()
+    }
+
+    /// Whether the utilisation of the joint follows a jump: the shown case, for which jumps are searched, decides on
+    /// both sides by the ultimate analysis.
+    #[must_use]
+    pub fn decides_at(&self, jump: &Jump) -> bool {
+        jump.points.iter().all(|index| {
+            let answer = self.points.get(*index).and_then(|point| point.outcome.as_ref().ok());
+            let case = answer.filter(|answer| answer.governing == Some(self.shown));
+            let verification = case.and_then(|answer| answer.cases.get(self.shown)?.verification.as_ref());
+            verification.is_some_and(|found| found.basis == Basis::Ultimate)
+        })
+    }
+
     /// At how many points the governing case is verified by an analysis.
     #[must_use]
     pub fn decided_by(&self, basis: Basis) -> usize {

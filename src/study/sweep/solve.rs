@@ -5,7 +5,7 @@
 //! analyses bit for bit, because the atlas depends on the group alone. Batches run in parallel.
 
 use super::{Answer, Point, PointCase, Target, Variable, fault};
-use crate::analysis::{CaseReport, Section, analyse, governing};
+use crate::analysis::{CaseReport, Section, analyse_without_elements, governing};
 use crate::diagnostic::Diagnostic;
 use crate::input::Template;
 use crate::model::{Joint, LoadCase};
@@ -118,7 +118,7 @@ impl Task<'_> {
         let cases: Vec<Result<Vec<LoadCase>, Vec<Diagnostic>>> =
             points.iter().map(|values| self.cases_at(&joint, values)).collect();
         joint.cases = cases.iter().flatten().flatten().cloned().collect();
-        let report = analyse(&joint);
+        let report = analyse_without_elements(&joint);
         let breached = report.breached();
         let mut rest = report.cases.as_slice();
         let mut outcomes = Vec::new();

@@ -9,8 +9,9 @@ use super::super::ink::Ink;
 use super::super::sheet;
 use super::notes;
 use super::plot::{Mark, Plot, range};
+use super::quantity::{MOST_MARKED, Quantity, all, always, none};
 use crate::analysis::Status;
-use crate::study::sweep::{Jump, Point, PointCase, Sweep, Variable};
+use crate::study::sweep::{Jump, Point, Sweep, Variable};
 use crate::units::UnitSystem;
 
 /// Size of the page, px.
@@ -21,92 +22,12 @@ const ACROSS: [f64; 2] = [88.0, 742.0];
 const HEIGHTS: [[f64; 2]; 3] = [[128.0, 410.0], [462.0, 570.0], [622.0, 716.0]];
 /// The notes.
 const NOTES: [f64; 4] = [852.0, 98.0, 1176.0, 770.0];
-/// Most points that are marked one by one.
-const MOST_MARKED: usize = 80;
 /// What stands at the value that the variable has without the sweep.
 const AS_GIVEN: &str = "as given";
 /// Room for the title of the uppermost plot, px.
 const TITLE_ROOM: f64 = 190.0;
 /// Room above the highest value, as a share.
 const HEADROOM: f64 = 0.06;
-
-/// What is drawn of one quantity.
-struct Quantity<'s> {
-    sweep: &'s Sweep,
-    variable: &'s Variable,
-    /// At a point, in the unit of the axis.
-    value: &'s dyn Fn(&Point) -> Option<f64>,
-    /// Whether it jumps with the ultimate strength.
-    jumps: bool,
-    /// On both sides of a jump, in the unit of the axis; `None` where it is known at the points alone.
-    at_jump: &'s dyn Fn(&Jump, usize) -> Option<f64>,
-    /// Whether a curve runs on between two neighbours.
-    joined: &'s dyn Fn(&Point, &Point) -> bool,
-}
-
-impl Quantity<'_> {
-    /// Points with their value, by index.
-    fn points(&self) -> Vec<(usize, [f64; 2])> {
-        let of = |(index, point): (usize, &Point)| {
-            Some((index, [self.variable.shown(point.values[0]), (self.value)(point)?]))
-        };
-        self.sweep.points.iter().enumerate().filter_map(of).collect()
-    }
-
-    /// The pieces of the curve, each unbroken.
-    fn pieces(&self) -> Vec<Vec<[f64; 2]>> {
-        let mut pieces: Vec<Vec<[f64; 2]>> = Vec::new();
-        let mut before: Option<usize> = None;
-        for (index, place) in self.points() {
-            let follows = before.is_some_and(|before| before + 1 == index && self.runs_on(before, index));
-            let jump = self.jump_between(before, index);
-            let sides = jump.and_then(|jump| Some([(self.at_jump)(jump, 0)?, (self.at_jump)(jump, 1)?]));
-            match (pieces.last_mut(), jump, sides) {
-                (Some(piece), Some(jump), Some([left, right])) => {
-                    piece.push([self.variable.shown(jump.at[0]), left]);
-                    pieces.push(vec![[self.variable.shown(jump.at[1]), right], place]);
-                }
-                (Some(piece), None, _) if follows => piece.push(place),
-                _ => pieces.push(vec![place]),
-            }
-            before = Some(index);
-        }
-        pieces
-    }
-
-    fn jump_between(&self, before: Option<usize>, index: usize) -> Option<&Jump> {
-        let between = |jump: &&Jump| before == Some(jump.points[0]) && jump.points[1] == index;
-        self.sweep.jumps.iter().filter(|_| self.jumps).find(between)
-    }
-
-    fn runs_on(&self, one: usize, next: usize) -> bool {
-        (self.joined)(&self.sweep.points[one], &self.sweep.points[next])
-    }
-
-    fn draw(&self, canvas: &mut Canvas, plot: &Plot, ink: Ink, width: f64, mark: Option<Mark>) {
-        for piece in self.pieces() {
-            if piece.len() > 1 {
-                plot.curve(canvas, &piece, ink, width);
-            }
-        }
-        let points = self.points();
-        if let Some(mark) = mark.filter(|_| points.len() <= MOST_MARKED) {
-            let places: Vec<[f64; 2]> = points.iter().map(|(_, place)| *place).collect();
-            plot.marks(canvas, &places, mark, ink);
-        }
-    }
-
-    fn values(&self) -> Vec<f64> {
-        let at_jumps =
-            self.sweep.jumps.iter().flat_map(|jump| [(self.at_jump)(jump, 0), (self.at_jump)(jump, 1)]);
-        self.points().iter().map(|(_, [_, value])| *value).chain(at_jumps.flatten()).collect()
-    }
-
-    /// Value at the last point that has one.
-    fn last(&self) -> Option<f64> {
-        self.points().last().map(|(_, [_, value])| *value)
-    }
-}
 
 /// The page.
 pub(super) fn drawn(sweep: &Sweep, variable: &Variable) -> Canvas {
@@ -156,29 +77,22 @@ fn from_zero(values: &[f64]) -> [f64; 2] {
     range([0.0, if most > 0.0 { most * (1.0 + HEADROOM) } else { 1.0 }].into_iter())
 }
 
-fn always(_: &Point, _: &Point) -> bool {
-    true
-}
-
 fn strength(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
     let (dimension, units): (_, UnitSystem) = (notes::measure(sweep), sweep.joint.units);
-    let shown =
-        |case: &PointCase, factor: f64| case.load_times(factor).map(|size| units.shown(dimension, size));
     let no_jump = |_: &Jump, _: usize| None;
-    let of = |point: &Point, factor: fn(&PointCase) -> Option<f64>| {
-        let case = sweep.shown_case(point)?;
-        shown(case, factor(case)?)
+    let side = |jump: &Jump, side: usize| {
+        let strength = jump.strength[side];
+        (strength.in_moment == sweep.in_moment()).then(|| units.shown(dimension, strength.size))
     };
-    let ultimate_value = |point: &Point| of(point, |case| Some(case.ultimate?.load_factor));
-    let elastic_value = |point: &Point| of(point, |case| Some(case.elastic?.load_factor));
-    let peak_value = |point: &Point| of(point, |case| case.peak_load_factor);
-    let side = |jump: &Jump, side: usize| Some(units.shown(dimension, jump.strength[side].size));
+    let of_ultimate = |point: &Point| notes::strength(sweep, point, |case| Some(case.ultimate?.load_factor));
+    let of_elastic = |point: &Point| notes::strength(sweep, point, |case| Some(case.elastic?.load_factor));
+    let of_peak = |point: &Point| notes::strength(sweep, point, |case| case.peak_load_factor);
     let ultimate =
-        Quantity { sweep, variable, value: &ultimate_value, jumps: true, at_jump: &side, joined: &always };
+        Quantity { sweep, variable, value: &of_ultimate, follows: &all, at_jump: &side, joined: &always };
     let elastic =
-        Quantity { sweep, variable, value: &elastic_value, jumps: false, at_jump: &no_jump, joined: &always };
+        Quantity { sweep, variable, value: &of_elastic, follows: &none, at_jump: &no_jump, joined: &always };
     let peak =
-        Quantity { sweep, variable, value: &peak_value, jumps: false, at_jump: &no_jump, joined: &always };
+        Quantity { sweep, variable, value: &of_peak, follows: &none, at_jump: &no_jump, joined: &always };
     let values = [ultimate.values(), elastic.values(), peak.values()].concat();
     let plot = Plot::new(area(0), x, from_zero(&values)).in_units(&variable.unit, "");
     plot.axes(canvas, None, &format!("nominal strength, {}", units.symbol(dimension)));
@@ -202,7 +116,7 @@ fn ratio(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
     // Both sides of a jump are located for the ultimate strength alone.
     let no_jump = |_: &Jump, _: usize| None;
     let quantity =
-        Quantity { sweep, variable, value: &value, jumps: true, at_jump: &no_jump, joined: &always };
+        Quantity { sweep, variable, value: &value, follows: &all, at_jump: &no_jump, joined: &always };
     let [least, most] = range(quantity.values().into_iter().chain([1.0]));
     let margin = 0.1 * (most - least);
     let plot = Plot::new(area(1), x, [least - margin, most + margin]).in_units(&variable.unit, "");
@@ -214,9 +128,17 @@ fn ratio(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
 fn utilisation(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
     let value = |point: &Point| point.outcome.as_ref().ok()?.utilisation();
     let no_jump = |_: &Jump, _: usize| None;
+    // Jumps are searched for the shown case alone.
+    let decides = |jump: &Jump| sweep.decides_at(jump);
     let same_basis = |one: &Point, next: &Point| notes::deciding(one) == notes::deciding(next);
-    let quantity =
-        Quantity { sweep, variable, value: &value, jumps: true, at_jump: &no_jump, joined: &same_basis };
+    let quantity = Quantity {
+        sweep,
+        variable,
+        value: &value,
+        follows: &decides,
+        at_jump: &no_jump,
+        joined: &same_basis,
+    };
     let values = quantity.values();
     let plot =
         Plot::new(area(2), x, from_zero(&[values.as_slice(), &[1.0]].concat())).in_units(&variable.unit, "");

@@ -3,17 +3,18 @@
 //! A line of contour is where the value, linear between solved points, is the number at it. A step stands where the
 //! strength jumps; where a point has no answer the map is blank.
 
+use super::super::canvas::as_float;
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text, outline};
 use super::super::font;
-use super::super::ink::{Ink, as_float, ramp};
+use super::super::ink::{Ink, ramp};
 use super::super::sheet;
 use super::super::space::Space;
 use super::field::{Field, Place};
 use super::notes;
-use super::plot::{Plot, range, ticks};
-use crate::output::number::trimmed;
-use crate::study::sweep::{Point, PointCase, Sweep, Variable};
-use std::collections::BTreeSet;
+use super::plot::{Plot, plain, range, ticks};
+use crate::output::number::{people, trimmed, utilisation};
+use crate::study::sweep::{Jump, Point, Sweep, Variable};
+use std::collections::BTreeMap;
 
 /// Width of the page, px; its height follows from the lines below the maps.
 const WIDTH: f64 = 1200.0;
@@ -36,12 +37,10 @@ const LIMIT: f64 = 1.0;
 struct Map<'s> {
     title: String,
     value: &'s dyn Fn(&Point) -> Option<f64>,
-    /// Whether it jumps with the ultimate strength.
-    jumps: bool,
-    /// Whether it steps where another case or analysis decides.
-    decided: bool,
-    /// A level of its own, drawn strong.
-    limit: Option<f64>,
+    /// Whether it steps between two neighbouring points, by index.
+    steps: &'s dyn Fn([usize; 2]) -> bool,
+    /// Whether it is the utilisation, which has a limit and is rounded up.
+    is_utilisation: bool,
 }
 
 /// The page.
@@ -51,43 +50,31 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
     let height = below + font::LEADING * SMALL * as_float(lines.len()) + FOOT;
     let mut canvas = Canvas::new(WIDTH, height.ceil());
     sheet::head(&mut canvas, None, &sweep.joint.title, &notes::subject(sweep));
-    let (dimension, units) = (notes::measure(sweep), sweep.joint.units);
-    let shown =
-        |case: &PointCase, factor: f64| case.load_times(factor).map(|size| units.shown(dimension, size));
-    let unit = units.symbol(dimension);
-    let of = |point: &Point, factor: fn(&PointCase) -> Option<f64>| {
-        let case = sweep.shown_case(point)?;
-        shown(case, factor(case)?)
-    };
-    let ultimate = |point: &Point| of(point, |case| Some(case.ultimate?.load_factor));
-    let elastic = |point: &Point| of(point, |case| Some(case.elastic?.load_factor));
+    let unit = sweep.joint.units.symbol(notes::measure(sweep));
+    let ultimate = |point: &Point| notes::strength(sweep, point, |case| Some(case.ultimate?.load_factor));
+    let elastic = |point: &Point| notes::strength(sweep, point, |case| Some(case.elastic?.load_factor));
     let ratio = |point: &Point| sweep.shown_case(point)?.ultimate_over_elastic();
     let utilisation = |point: &Point| point.outcome.as_ref().ok()?.utilisation();
+    let jumps: BTreeMap<[usize; 2], &Jump> = sweep.jumps.iter().map(|jump| (jump.points, jump)).collect();
+    let jumps_at = |pair: [usize; 2]| jumps.contains_key(&pair);
+    let never = |_: [usize; 2]| false;
+    let decided = |pair: [usize; 2]| {
+        // Jumps are searched for the shown case alone.
+        let [one, next] = pair.map(|index| sweep.points.get(index).and_then(notes::deciding));
+        one != next || jumps.get(&pair).is_some_and(|jump| sweep.decides_at(jump))
+    };
+    let strength = |name: &str| format!("nominal {name} strength, {unit}");
     let maps = [
-        Map {
-            title: format!("nominal ultimate strength, {unit}"),
-            value: &ultimate,
-            jumps: true,
-            decided: false,
-            limit: None,
-        },
-        Map {
-            title: format!("nominal elastic strength, {unit}"),
-            value: &elastic,
-            jumps: false,
-            decided: false,
-            limit: None,
-        },
-        Map { title: "ultimate / elastic".into(), value: &ratio, jumps: true, decided: false, limit: None },
+        Map { title: strength("ultimate"), value: &ultimate, steps: &jumps_at, is_utilisation: false },
+        Map { title: strength("elastic"), value: &elastic, steps: &never, is_utilisation: false },
+        Map { title: "ultimate / elastic".into(), value: &ratio, steps: &jumps_at, is_utilisation: false },
         Map {
             title: notes::utilisation(sweep).into(),
             value: &utilisation,
-            jumps: true,
-            decided: true,
-            limit: Some(LIMIT),
+            steps: &decided,
+            is_utilisation: true,
         },
     ];
-    let torn: BTreeSet<[usize; 2]> = sweep.jumps.iter().map(|jump| jump.points).collect();
     for (index, map) in maps.iter().enumerate() {
         let (left, top) = (LEFT[index % 2], TOP[index / 2]);
         let plot = Plot::new(
@@ -96,31 +83,19 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
             range(up.values.iter().map(|value| up.shown(*value))),
         )
         .in_units(&across.unit, &up.unit);
-        // Titles of the x axis only below the lower maps, those of the y axis only beside the left ones.
-        draw(&mut canvas, sweep, [across, up], &torn, map, &plot);
+        draw(&mut canvas, sweep, [across, up], map, &plot);
     }
     canvas.lines(&lines, Spot::new(sheet::MARGIN, below), SMALL, Ink::TEXT);
     sheet::foot(&mut canvas, &sweep.joint);
     canvas
 }
 
-fn draw(
-    canvas: &mut Canvas,
-    sweep: &Sweep,
-    [across, up]: [&Variable; 2],
-    torn: &BTreeSet<[usize; 2]>,
-    map: &Map<'_>,
-    plot: &Plot,
-) {
+fn draw(canvas: &mut Canvas, sweep: &Sweep, [across, up]: [&Variable; 2], map: &Map<'_>, plot: &Plot) {
     // The first variable runs slowest.
     let index = |column: usize, row: usize| column * up.values.len() + row;
     let value = |column: usize, row: usize| sweep.points.get(index(column, row)).and_then(map.value);
-    let is_torn = |[a, b]: [usize; 2], [c, d]: [usize; 2]| {
-        let pair = [index(a, b), index(c, d)];
-        let [one, next] = pair.map(|point| sweep.points.get(point).and_then(notes::deciding));
-        (map.jumps && torn.contains(&pair)) || (map.decided && one != next)
-    };
-    let field = Field::new(across.values.len(), up.values.len(), value, is_torn);
+    let steps = |[a, b]: [usize; 2], [c, d]: [usize; 2]| (map.steps)([index(a, b), index(c, d)]);
+    let field = Field::new(across.values.len(), up.values.len(), value, steps);
     let spot = |place: Place| {
         let at = |variable: &Variable, share: f64| {
             let last = as_float(variable.values.len() - 1);
@@ -128,9 +103,10 @@ fn draw(
         };
         plot.spot(at(across, place[0]), at(up, place[1]))
     };
+    let titles = [notes::axis(across), notes::axis(up), map.title.clone()];
     canvas.area(&plot.area, Some(Ink::HAIR), None);
     let Some(extent) = field.extent() else {
-        plot.axes(canvas, Some(&notes::axis(across)), &map.title);
+        plot.axes_over(canvas, &titles);
         return;
     };
     let extent = range(extent.into_iter());
@@ -150,16 +126,17 @@ fn draw(
         fill(*level, shade(as_float(band) / bands));
     }
     let mut space = Space::new(plot.area.grown(-4.0));
+    let limit = map.is_utilisation.then_some(LIMIT);
     if let (Some(x), Some(y)) = (across.given, up.given) {
         let at = plot.spot(across.shown(x), up.shown(y));
         space.take(Area::around(at, Spot::new(18.0, 18.0)));
-        contours(canvas, &mut space, &field, &levels, map.limit, &spot);
+        contours(canvas, &mut space, &field, &levels, limit, &spot);
         as_given(canvas, plot, at);
     } else {
-        contours(canvas, &mut space, &field, &levels, map.limit, &spot);
+        contours(canvas, &mut space, &field, &levels, limit, &spot);
     }
-    plot.axes_over(canvas, &notes::axis(across), &notes::axis(up), &map.title);
-    legend(canvas, plot, &levels, extent);
+    plot.axes_over(canvas, &titles);
+    legend(canvas, plot, &levels, extent, map.is_utilisation);
 }
 
 /// A cross at the values that the file has.
@@ -186,38 +163,34 @@ fn contours(
     limit: Option<f64>,
     spot: &dyn Fn(Place) -> Spot,
 ) {
-    let strong = limit.map(|limit| (limit, Stroke::solid(Ink::EXCEEDED, 2.6), Ink::EXCEEDED));
     #[allow(clippy::float_cmp)] // a tick that is the limit is exactly it
-    let is_limit = |level: &&f64| limit == Some(**level);
-    let usual = levels
-        .iter()
-        .filter(|level| !is_limit(level))
-        .map(|level| (*level, Stroke::solid(Ink::TEXT, 1.0), Ink::TEXT));
-    let drawn: Vec<(f64, Ink, Vec<[Spot; 2]>)> = usual
-        .chain(strong)
-        .map(|(level, stroke, ink)| {
-            let pieces: Vec<[Spot; 2]> = field.line(level).into_iter().map(|piece| piece.map(spot)).collect();
-            let data: Vec<String> = pieces.iter().map(|piece| outline(piece, false)).collect();
-            if !data.is_empty() {
-                canvas.path(&data.concat(), None, Some(stroke));
-            }
-            (level, ink, pieces)
-        })
-        .collect();
-    for (level, ink, pieces) in drawn.into_iter().rev() {
-        number(canvas, space, level, ink, pieces);
+    let is_usual = |(level, _): &(&f64, String)| limit != Some(**level);
+    let usual = levels.iter().zip(plain(levels)).filter(is_usual);
+    let usual = usual.map(|(level, words)| (*level, words, Stroke::solid(Ink::TEXT, 1.0)));
+    let strong = limit.map(|limit| (limit, trimmed(limit), Stroke::solid(Ink::EXCEEDED, 2.6)));
+    let mut lines: Vec<(String, Ink, Vec<[Spot; 2]>)> = Vec::new();
+    for (level, words, stroke) in usual.chain(strong) {
+        let pieces: Vec<[Spot; 2]> = field.line(level).into_iter().map(|piece| piece.map(spot)).collect();
+        let data: Vec<String> = pieces.iter().map(|piece| outline(piece, false)).collect();
+        if !data.is_empty() {
+            canvas.path(&data.concat(), None, Some(stroke));
+        }
+        lines.push((words, stroke.ink, pieces));
+    }
+    // The limit was drawn last and gets its number first.
+    for (words, ink, pieces) in lines.into_iter().rev() {
+        number(canvas, space, &words, ink, pieces);
     }
 }
 
 /// The number of a contour, where there is room on it: as near the middle of the map as can be.
-fn number(canvas: &mut Canvas, space: &mut Space, level: f64, ink: Ink, mut pieces: Vec<[Spot; 2]>) {
-    let words = trimmed(level);
+fn number(canvas: &mut Canvas, space: &mut Space, words: &str, ink: Ink, mut pieces: Vec<[Spot; 2]>) {
     let middle = space.frame().middle();
     let distance = |piece: &[Spot; 2]| ((piece[0] + piece[1]) / 2.0 - middle).norm();
     pieces.sort_by(|a, b| distance(a).total_cmp(&distance(b)));
     for [from, to] in pieces {
         let at = (from + to) / 2.0 + Spot::new(0.0, 0.5 * font::CAPITALS * SMALL);
-        let text = Text { size: SMALL, ink, anchor: Anchor::Middle, ..Text::new(&words, at) };
+        let text = Text { size: SMALL, ink, anchor: Anchor::Middle, ..Text::new(words, at) };
         if space.is_free(&text.area()) {
             space.take(text.area());
             canvas.area(&text.area().grown(1.0), Some(Ink::PAPER), None);
@@ -228,7 +201,7 @@ fn number(canvas: &mut Canvas, space: &mut Space, level: f64, ink: Ink, mut piec
 }
 
 /// The shades with the levels between them.
-fn legend(canvas: &mut Canvas, plot: &Plot, levels: &[f64], extent: [f64; 2]) {
+fn legend(canvas: &mut Canvas, plot: &Plot, levels: &[f64], extent: [f64; 2], is_utilisation: bool) {
     let (left, right) = (plot.area.most.x + 14.0, plot.area.most.x + 30.0);
     let (bottom, height) = (plot.area.most.y, plot.area.size().y);
     let bands = levels.len() + 1;
@@ -239,10 +212,10 @@ fn legend(canvas: &mut Canvas, plot: &Plot, levels: &[f64], extent: [f64; 2]) {
         canvas.area(&Area::new(left, lower - each - 0.3, right, lower), Some(ink), None);
     }
     canvas.area(&Area::new(left, bottom - height, right, bottom), None, Some(Stroke::solid(Ink::QUIET, 1.0)));
-    let numbers = [extent[0]].into_iter().chain(levels.iter().copied()).chain([extent[1]]);
-    for (index, value) in numbers.enumerate() {
-        let words = crate::output::number::people(value);
-        let words = if index == 0 || index == bands { words } else { trimmed(value) };
+    // A utilisation is rounded up, as everywhere.
+    let end = |value: f64| if is_utilisation { utilisation(value, value > LIMIT) } else { people(value) };
+    let numbers = [end(extent[0])].into_iter().chain(plain(levels)).chain([end(extent[1])]);
+    for (index, words) in numbers.enumerate() {
         let at = Spot::new(right + 6.0, bottom - each * as_float(index) + 0.5 * font::CAPITALS * SMALL);
         let ink = if index == 0 || index == bands { Ink::QUIET } else { Ink::TEXT };
         canvas.text(&Text { size: SMALL, ink, ..Text::new(&words, at) });

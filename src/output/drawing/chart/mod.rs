@@ -4,6 +4,7 @@
 //! |---|---|
 //! | one variable: strength, ratio and utilisation below each other | `curves.rs` |
 //! | two variables: four maps with contours | `maps.rs` |
+//! | one quantity along a variable | `quantity.rs` |
 //! | regions and lines of values on a grid | `field.rs` |
 //! | one plot: frame, ticks, curves by plotters | `plot.rs`, `pen.rs` |
 //! | what the drawing says in words | `notes.rs` |
@@ -17,6 +18,7 @@ mod maps;
 mod notes;
 mod pen;
 mod plot;
+mod quantity;
 
 use super::canvas::Canvas;
 use crate::study::sweep::Sweep;

@@ -1,5 +1,6 @@
 //! What the drawing of a sweep says in words.
 
+use super::super::canvas::as_float;
 use super::super::canvas::{Area, BODY, Canvas, SMALL, Spot, Stroke, Text};
 use super::super::font;
 use super::super::ink::Ink;
@@ -37,7 +38,7 @@ pub(super) fn axis(variable: &Variable) -> String {
 pub(super) fn subject(sweep: &Sweep) -> String {
     let labels = Labels::new(sweep);
     let varied: Vec<String> = (0..sweep.variables.len()).map(|variable| labels.range(variable)).collect();
-    format!("Case {}: {}", sweep.shown_name(), varied.join(" and "))
+    format!("Case {}: {}", sweep.shown_name(), varied.join("; "))
 }
 
 /// Which case decides a point, and by which analysis.
@@ -57,11 +58,16 @@ pub(super) fn utilisation(sweep: &Sweep) -> &'static str {
     }
 }
 
-/// Whether the load of the shown case is a force or a moment.
+/// The dimension of the strengths that are drawn.
 pub(super) fn measure(sweep: &Sweep) -> Dimension {
-    let demands = sweep.points.iter().filter_map(|point| sweep.shown_case(point)?.demand);
-    let mut moments = demands.map(|demand| demand.in_moment);
-    if moments.next().unwrap_or(false) { Dimension::Moment } else { Dimension::Force }
+    if sweep.in_moment() { Dimension::Moment } else { Dimension::Force }
+}
+
+/// A strength of the shown case at a point in the unit of the drawing; `None` where it has the other measure.
+pub(super) fn strength(sweep: &Sweep, point: &Point, factor: fn(&PointCase) -> Option<f64>) -> Option<f64> {
+    let case = sweep.shown_case(point)?;
+    let demand = case.demand.filter(|demand| demand.in_moment == sweep.in_moment())?;
+    Some(sweep.joint.units.shown(measure(sweep), demand.size * factor(case)?))
 }
 
 /// Whether the peak exceeds the ultimate strength somewhere.
@@ -96,6 +102,12 @@ fn sentences(sweep: &Sweep) -> Vec<String> {
         words::basis_in_brief(&sweep.joint),
         format!("{} points: {}.", sweep.points.len(), counts.join(", ")),
     ];
+    let other = sweep.in_other_measure();
+    if other > 0 {
+        let noun = if sweep.in_moment() { "force" } else { "moment alone" };
+        sentences
+            .push(format!("{other} points at which the load is a {noun} are left out of the strengths."));
+    }
     sentences.extend(summary::sentences(sweep, &Labels::new(sweep)));
     sentences.extend(summary::out_of_the_ordinary(sweep));
     sentences
@@ -136,9 +148,18 @@ pub(super) fn draw(canvas: &mut Canvas, panel: &Area, sweep: &Sweep) {
         key("utilisation, exceeded", &|canvas, at| Mark::Ring.draw(canvas, at, Ink::EXCEEDED));
     }
     y = heading(canvas, "What it shows", left, right, y);
-    for sentence in &sentences(sweep) {
+    let sentences = sentences(sweep);
+    for (index, sentence) in sentences.iter().enumerate() {
         let lines = font::lines(sentence, SMALL, right - left);
-        if y + font::LEADING * SMALL * super::super::ink::as_float(lines.len()) > panel.most.y - 8.0 {
+        let left_over = sentences.len() - index;
+        let free = if left_over == 1 { 0.0 } else { font::LEADING * SMALL };
+        if y + font::LEADING * SMALL * as_float(lines.len()) + free > panel.most.y - 8.0 {
+            let words = format!("and {left_over} more: see the text");
+            canvas.text(&Text {
+                size: SMALL,
+                ink: Ink::QUIET,
+                ..Text::new(&words, Spot::new(left, y + SMALL))
+            });
             break;
         }
         y = canvas.lines(&lines, Spot::new(left, y + SMALL), SMALL, Ink::TEXT) - SMALL + 6.0;

@@ -4,7 +4,7 @@ use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text};
 use super::super::font;
 use super::super::ink::Ink;
 use super::pen::{Pen, fine};
-use crate::output::number::trimmed;
+use crate::output::number::graded;
 use plotters::chart::ChartBuilder;
 use plotters::coord::ranged1d::{BoldPoints, Ranged};
 use plotters::coord::types::RangedCoordf64;
@@ -71,6 +71,16 @@ pub(super) fn range(values: impl Iterator<Item = f64>) -> [f64; 2] {
     if most - least < least_width { [middle - least_width, middle + least_width] } else { [least, most] }
 }
 
+/// Round numbers as text, with as many decimals as tell them apart.
+pub(super) fn plain(ticks: &[f64]) -> Vec<String> {
+    let step = match ticks {
+        [first, second, ..] => second - first,
+        [only] => *only,
+        [] => 0.0,
+    };
+    graded(ticks, step)
+}
+
 /// Round numbers within a range, at most so many.
 pub(super) fn ticks(range: [f64; 2], most: usize) -> Vec<f64> {
     let axis: RangedCoordf64 = (range[0]..range[1]).into();
@@ -79,7 +89,7 @@ pub(super) fn ticks(range: [f64; 2], most: usize) -> Vec<f64> {
 
 /// Round numbers of degrees within a range, at most so many; those of other units where the range is small.
 fn ticks_in_degrees([least, most]: [f64; 2], count: usize) -> Vec<f64> {
-    let fits = |step: &&f64| (most - least) / **step + 1.0 <= super::super::ink::as_float(count);
+    let fits = |step: &&f64| (most - least) / **step + 1.0 <= super::super::canvas::as_float(count);
     let step = STEPS_IN_DEGREES.iter().find(fits).filter(|step| most - least >= 2.0 * **step);
     let Some(step) = step else { return ticks([least, most], count) };
     let mut found = Vec::new();
@@ -112,34 +122,40 @@ impl Plot {
     /// Draws the grid, the numbers and the titles; the numbers of the x axis only with a title below.
     pub(super) fn axes(&self, canvas: &mut Canvas, x_title: Option<&str>, y_title: &str) {
         let grid = Stroke::solid(Ink::HAIR, 0.8);
-        for value in self.x_ticks() {
-            let at = self.spot(value, self.y[0]);
+        let found = self.x_ticks();
+        for (value, words) in found.iter().zip(plain(&found)) {
+            let at = self.spot(*value, self.y[0]);
             canvas.line(at, Spot::new(at.x, self.area.least.y), grid);
             if x_title.is_some() {
-                number(canvas, value, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
+                number(canvas, &words, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
             }
         }
-        for value in self.y_ticks() {
-            let at = self.spot(self.x[0], value);
+        let found = self.y_ticks();
+        for (value, words) in found.iter().zip(plain(&found)) {
+            let at = self.spot(self.x[0], *value);
             canvas.line(at, Spot::new(self.area.most.x, at.y), grid);
-            number(canvas, value, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
+            number(canvas, &words, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
         }
         self.frame(canvas);
         self.titles(canvas, x_title, y_title);
     }
 
-    /// Draws numbers, titles and frame on a map that fills the plot; the title of the y axis stands upright beside it.
-    pub(super) fn axes_over(&self, canvas: &mut Canvas, x_title: &str, y_title: &str, title: &str) {
+    /// Draws numbers, the titles of x, y and the whole, and the frame on a map that fills the plot; the title of the y
+    /// axis stands upright beside it.
+    pub(super) fn axes_over(&self, canvas: &mut Canvas, titles: &[String; 3]) {
+        let [x_title, y_title, title] = titles;
         let tick = Stroke::solid(Ink::QUIET, 1.0);
-        for value in self.x_ticks() {
-            let at = self.spot(value, self.y[0]);
+        let found = self.x_ticks();
+        for (value, words) in found.iter().zip(plain(&found)) {
+            let at = self.spot(*value, self.y[0]);
             canvas.line(at, at + Spot::new(0.0, 4.0), tick);
-            number(canvas, value, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
+            number(canvas, &words, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
         }
-        for value in self.y_ticks() {
-            let at = self.spot(self.x[0], value);
+        let found = self.y_ticks();
+        for (value, words) in found.iter().zip(plain(&found)) {
+            let at = self.spot(self.x[0], *value);
             canvas.line(at, at - Spot::new(4.0, 0.0), tick);
-            number(canvas, value, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
+            number(canvas, &words, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
         }
         self.frame(canvas);
         self.titles(canvas, Some(x_title), title);
@@ -175,7 +191,7 @@ impl Plot {
         let mut most = MOST_TICKS;
         loop {
             let found = self.ticks(0, most);
-            let widest = found.iter().map(|value| font::width(&trimmed(*value), SMALL)).fold(0.0, f64::max);
+            let widest = plain(&found).iter().map(|words| font::width(words, SMALL)).fold(0.0, f64::max);
             let apart = match found.as_slice() {
                 [first, second, ..] => (self.spot(*second, 0.0) - self.spot(*first, 0.0)).x.abs(),
                 _ => f64::INFINITY,
@@ -190,7 +206,7 @@ impl Plot {
     fn y_ticks(&self) -> Vec<f64> {
         let room = self.area.size().y / (1.9 * SMALL);
         let mut most = MOST_TICKS;
-        while super::super::ink::as_float(most) > room && most > 2 {
+        while super::super::canvas::as_float(most) > room && most > 2 {
             most -= 1;
         }
         self.ticks(1, most)
@@ -217,8 +233,8 @@ impl Plot {
 }
 
 /// A number at a tick.
-fn number(canvas: &mut Canvas, value: f64, at: Spot, anchor: Anchor) {
-    canvas.text(&Text { size: SMALL, ink: Ink::QUIET, anchor, ..Text::new(&trimmed(value), at) });
+fn number(canvas: &mut Canvas, words: &str, at: Spot, anchor: Anchor) {
+    canvas.text(&Text { size: SMALL, ink: Ink::QUIET, anchor, ..Text::new(words, at) });
 }
 
 #[cfg(test)]

@@ -3,8 +3,9 @@
 //! Neighbouring cells of one shade are drawn as one piece. A band narrower than [`THINNEST`] px is drawn that wide,
 //! and the drawing says so. The run that ruptures first is drawn last: its shade is the one seen at a corner.
 
+use super::super::canvas::as_float;
 use super::super::canvas::{Area, Canvas, Spot, Stroke, spot};
-use super::super::ink::{Ink, as_float, ramp};
+use super::super::ink::{Ink, ramp};
 use super::super::space::Space;
 use super::super::view::{View, on_page};
 use super::subject::Subject;
@@ -67,9 +68,9 @@ fn bands<'r>(subject: &Subject<'r>) -> Vec<Band<'r>> {
     let mut bands = Vec::new();
     let mut last = None;
     for (number, weld) in subject.joint().group.welds().iter().enumerate() {
-        for (index, run) in weld.runs.iter().enumerate() {
-            let count = rest.first().map_or(0, |row| cells(run, row.length)).min(rest.len());
-            let (own, after) = rest.split_at(count);
+        for index in 0..weld.runs.len() {
+            let is_own = |row: &&ElementRow| row.weld == number && row.run == index;
+            let (own, after) = rest.split_at(rest.iter().take_while(is_own).count());
             rest = after;
             let ratios: Vec<Option<f64>> = own.iter().map(|row| row.deformation_ratio).collect();
             let band = Band { weld, index, stretches: stretches(&ratios) };
@@ -140,14 +141,6 @@ fn corners(weld: &Weld, index: usize, view: &View) -> Vec<Corner> {
     let start = before.and_then(|before| corner(0.0, -run.tangent(0.0), -before.tangent(1.0), true));
     let end = after.and_then(|after| corner(1.0, run.tangent(1.0), after.tangent(0.0), false));
     start.into_iter().chain(end).collect()
-}
-
-/// Cells of this length on a run.
-fn cells(run: &Run, cell: f64) -> usize {
-    // A whole number by construction, far below 2^32.
-    #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)]
-    let count = (run.length() / cell).round() as usize;
-    count
 }
 
 /// Joins neighbours of one shade; the whole run without a shade where there are no cells.

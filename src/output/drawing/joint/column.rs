@@ -1,8 +1,9 @@
 //! A column of headings, sentences and symbols, written from top to bottom.
 
+use super::super::canvas::as_float;
 use super::super::canvas::{BODY, Canvas, SMALL, Spot, Stroke, Text};
 use super::super::font;
-use super::super::ink::{Ink, as_float};
+use super::super::ink::Ink;
 
 /// Distance of rows, px.
 pub(super) const ROW: f64 = 22.0;
@@ -44,20 +45,20 @@ impl Column<'_> {
         self.y += 5.0;
     }
 
-    /// A sentence in small letters, as many lines of it as fit; false when some were left out.
+    /// A sentence in small letters, whole or not at all; whether there was room.
     pub(super) fn sentence(&mut self, words: &str, ink: Ink) -> bool {
-        for line in font::lines(words, SMALL, self.room()) {
-            if self.y + font::LEADING * SMALL > self.bottom {
-                return false;
-            }
-            self.canvas.text(&Text {
-                size: SMALL,
-                ink,
-                ..Text::new(&line, Spot::new(self.left, self.y + SMALL))
-            });
-            self.y += font::LEADING * SMALL;
+        self.sentence_above(words, ink, 0.0)
+    }
+
+    /// The same where so much room must stay free below.
+    pub(super) fn sentence_above(&mut self, words: &str, ink: Ink, free: f64) -> bool {
+        let lines = font::lines(words, SMALL, self.room());
+        let height = font::LEADING * SMALL * as_float(lines.len());
+        if self.y + height + free > self.bottom {
+            return false;
         }
-        self.y += 3.0;
+        self.canvas.lines(&lines, Spot::new(self.left, self.y + SMALL), SMALL, ink);
+        self.y += height + 3.0;
         true
     }
 

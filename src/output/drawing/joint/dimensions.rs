@@ -13,13 +13,15 @@ use crate::model::{Run, Vector};
 use crate::output::number::length;
 
 /// Distance of rows, px.
-pub(super) const ROW: f64 = 38.0;
+pub(super) const ROW: f64 = 41.0;
 /// Half a tick, px.
 const TICK: f64 = 4.5;
 /// Distance of texts from their line, px.
 const GAP: f64 = 4.0;
 /// Most measures in a row.
 const MOST: usize = 6;
+/// Share of the group by which a load lies clearly outside it.
+const CLEARLY: f64 = 0.03;
 /// Places closer than this share of the group count as one.
 const SAME: f64 = 2e-3;
 
@@ -63,7 +65,7 @@ impl Dimensions {
 
     /// Room needed left and above, right and below of the group, px.
     pub(super) fn room(&self) -> (Spot, Spot) {
-        let depth = |rows: &Rows| ROW * super::super::ink::as_float(rows.rows.len());
+        let depth = |rows: &Rows| ROW * super::super::canvas::as_float(rows.rows.len());
         let (across, up) = (depth(&self.across), depth(&self.up));
         let split = |beyond: bool, depth: f64| if beyond { (0.0, depth) } else { (depth, 0.0) };
         let (below, above) = split(self.across.beyond, across);
@@ -82,7 +84,7 @@ impl Dimensions {
     ) {
         for rows in [&self.across, &self.up] {
             for (index, places) in rows.rows.iter().enumerate() {
-                let offset = 12.0 + ROW * super::super::ink::as_float(index);
+                let offset = 12.0 + ROW * super::super::canvas::as_float(index);
                 row(canvas, space, subject, view, rows, places, group, offset);
             }
         }
@@ -99,11 +101,12 @@ fn rows(subject: &Subject<'_>, axis: Axis) -> Rows {
     // Loads, with the way they point, decide which side stays free.
     let middle = 0.5 * (across.of(subject.least) + across.of(subject.most));
     let half = 0.5 * (across.of(subject.most) - across.of(subject.least));
-    let force = across.of(subject.case.load.force).signum() * 0.05 * size;
     let loads = subject.near_loads();
-    let lean: f64 = loads.iter().map(|at| across.of(*at) - middle + force).sum();
-    // Usual is below and left; the other side only where the loads lie clearly there.
-    let usual_is_taken = lean < -1.02 * half - 0.04 * size;
+    // Usual is below and left; the other side where a load lies or points out of the group there.
+    let downward = across.of(subject.case.load.force) < 0.0;
+    let outside = |at: &Vector| across.of(*at) - middle < -half - CLEARLY * size;
+    let at_edge = |at: &Vector| downward && across.of(*at) - middle < -half + CLEARLY * size;
+    let usual_is_taken = loads.iter().any(|at| outside(at) || at_edge(at));
     let mut rows = Vec::new();
     let runs = subject.joint().group.welds().iter().flat_map(|weld| &weld.runs);
     let parts = distinct(runs.flat_map(|run| reach(run, axis)), size);
@@ -203,8 +206,8 @@ fn measure(
     };
     let size = text.area().size();
     let offset = match axis {
-        Axis::X => Spot::new(0.0, 0.5 * size.y + 2.0),
-        Axis::Y => Spot::new(0.5 * size.x + 2.0, 0.0),
+        Axis::X => Spot::new(0.0, 0.5 * size.y + TICK + 3.5),
+        Axis::Y => Spot::new(0.5 * size.x + TICK + 3.5, 0.0),
     };
     let baseline = match axis {
         Axis::X => Spot::new(0.0, 0.5 * (font::ASCENT - font::DESCENT) * SMALL),

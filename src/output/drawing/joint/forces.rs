@@ -15,8 +15,8 @@ use crate::analysis::{CellForce, ElementRow};
 const LONGEST: (f64, f64, f64) = (0.16, 26.0, 72.0);
 /// Least distance of arrows along a weld, px.
 const SPACING: f64 = 20.0;
-/// Cosine of the angle between force and weld from which arrows would cover each other.
-const MOSTLY_ALONG: f64 = 0.8;
+/// Cosine of the angle between force and weld from which arrows begin to cover each other.
+const MOSTLY_ALONG: f64 = 0.7;
 /// Most arrows of one method.
 const MOST: usize = 160;
 /// Distance at which every weld is down to one arrow, px: the page is narrower.
@@ -93,11 +93,11 @@ fn chosen<'r>(subject: &Subject<'r>, view: &View) -> Vec<&'r ElementRow> {
     }
 }
 
-/// How far arrows lie along their weld: the mean cosine, from where they would cover each other.
+/// How far arrows lie along their weld, 0 to 1, by their mean cosine.
 fn along(rows: &[ElementRow]) -> f64 {
     let cosines: Vec<f64> = rows.iter().filter_map(|row| row.angle).map(f64::cos).collect();
-    let mean = cosines.iter().sum::<f64>() / super::super::ink::as_float(cosines.len().max(1));
-    if mean > MOSTLY_ALONG { mean } else { 0.0 }
+    let mean = cosines.iter().sum::<f64>() / super::super::canvas::as_float(cosines.len().max(1));
+    ((mean - MOSTLY_ALONG) / (1.0 - MOSTLY_ALONG)).max(0.0).powi(2)
 }
 
 /// Rows of one weld about `gap` mm apart, at least one.

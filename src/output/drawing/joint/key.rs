@@ -1,8 +1,9 @@
 //! The key: shades, arrows and marks, and where the marks stand.
 
 use super::super::arrow::Arrow;
+use super::super::canvas::as_float;
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text};
-use super::super::ink::{Ink, as_float, ramp};
+use super::super::ink::{Ink, ramp};
 use super::bands;
 use super::column::Column;
 use super::forces::{ELASTIC, Forces, ULTIMATE};
@@ -40,19 +41,22 @@ pub(super) fn draw(column: &mut Column<'_>, subject: &Subject<'_>, forces: &Forc
         column.sentence(&format!("At the given load, middle of {pieces}; longest {longest}."), Ink::QUIET);
     }
     let place = |at: Vector| point(subject.joint().units, Dimension::Length, &[at.x, at.y]);
-    let on_weld = |found: &Place| {
-        let name = subject.joint().group.welds().get(found.weld).map_or("", |weld| weld.name.as_str());
-        format!("{}, {name}", place(found.at))
+    let welds = subject.joint().group.welds();
+    // With a single weld its name says nothing.
+    let name = |found: &Place| {
+        welds.get(found.weld).filter(|_| welds.len() > 1).map(|weld| format!("in {}", weld.name))
     };
-    column.key("weld centroid", Some(&place(subject.centroid())), marks::centroid);
+    column.key(&format!("centroid {}", place(subject.centroid())), None, marks::centroid);
     if let Some(centre) = subject.near_centre() {
-        column.key("centre of rotation", Some(&place(centre)), marks::centre);
+        column.key(&format!("centre {}", place(centre)), None, marks::centre);
     }
     if let Some(critical) = subject.state().and_then(|state| state.critical.as_ref()) {
-        column.key("first rupture, ultimate", Some(&on_weld(&critical.place)), marks::rupture);
+        let found = &critical.place;
+        column.key(&format!("first rupture {}", place(found.at)), name(found).as_deref(), marks::rupture);
     }
     if let Some(elastic) = subject.case.elastic() {
-        column.key("worst point, elastic", Some(&on_weld(&elastic.critical.place)), marks::worst);
+        let found = &elastic.critical.place;
+        column.key(&format!("elastic worst {}", place(found.at)), name(found).as_deref(), marks::worst);
     }
 }
 

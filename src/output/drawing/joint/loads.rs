@@ -1,7 +1,9 @@
 //! The loads where they act, the resultant's line of action, and its distance from the centroid.
 //!
-//! A force hangs at its point of application. A load too far away to be drawn in place stands at the rim, on its
-//! own line of action or in its direction, and its words say where it acts.
+//! A force hangs at its point of application; moments at one place have one arrow for their sum. A force too far
+//! away to be drawn in place stands at the rim, where the way to it leaves the drawing, and its words say where it
+//! acts; a moment too far away, or without a place, stands at the centroid. Which is shown, a force or a moment, is
+//! told by the measure of the case's strength, so that the rounding of loads that cancel is no load.
 
 use super::super::arrow::Arrow;
 use super::super::canvas::{Area, Canvas, SMALL, Spot, Stroke, Text};
@@ -19,6 +21,14 @@ pub(super) const LENGTHS: (f64, f64) = (84.0, 38.0);
 /// Radius of the arrow of a moment, px.
 const TURN: f64 = 22.0;
 
+/// Shortest perpendicular that is drawn, px.
+const SHORTEST_ARM: f64 = 14.0;
+/// Side of the mark of a right angle, px.
+const RIGHT_ANGLE: f64 = 8.0;
+/// Where the eccentricity is written along the perpendicular.
+const ALONG_THE_ARM: f64 = 0.62;
+/// Farther than any page reaches, px.
+const BEYOND: f64 = 5000.0;
 /// Longest words of a load, px.
 const LONGEST_NAME: f64 = 330.0;
 /// Least room for a name in them, px.
@@ -28,13 +38,12 @@ const LOAD: Arrow = Arrow { ink: Ink::LOAD, width: 3.0, head: 13.0 };
 
 /// Loads that are drawn one by one.
 fn drawn<'r>(subject: &Subject<'r>) -> Vec<&'r AppliedLoad> {
-    if subject.draws_each_load() { subject.applied().loads.iter().collect() } else { Vec::new() }
+    if subject.draws_each_load() { subject.loads().iter().collect() } else { Vec::new() }
 }
 
 /// Whether the resultant says more than the loads themselves.
 fn resultant_is_shown(subject: &Subject<'_>) -> bool {
-    let loads = &subject.applied().loads;
-    loads.len() > 1 && subject.case.load.force.norm() > 0.0
+    subject.loads().len() > 1 && subject.is_force()
 }
 
 /// Draws the loads and takes their place; the words of those that have none at them.
@@ -46,21 +55,26 @@ pub(super) fn draw(
 ) -> Vec<String> {
     line_of_action(canvas, space, subject, view);
     let loads = drawn(subject);
-    let mut unsaid = Vec::new();
+    if loads.is_empty() {
+        resultant(canvas, space, subject, view);
+        return subject.loads().iter().map(|load| in_words(subject, load)).collect();
+    }
     let greatest = loads.iter().map(|load| load.wrench.force.norm()).fold(0.0, f64::max);
-    for load in &loads {
-        let size = load.wrench.force.norm();
-        if size > 0.0 {
-            let length = LENGTHS.1 + (LENGTHS.0 - LENGTHS.1) * size / greatest;
-            unsaid.extend(force(canvas, space, subject, view, load, length));
-        }
-        if load.wrench.moment.z.abs() > 0.0 {
-            unsaid.extend(moment(canvas, space, subject, view, load));
+    let mut unsaid = Vec::new();
+    for load in loads.iter().filter(|load| load.wrench.force.norm() > 0.0) {
+        let length = LENGTHS.1 + (LENGTHS.0 - LENGTHS.1) * load.wrench.force.norm() / greatest;
+        unsaid.extend(force(canvas, space, subject, view, load, length));
+    }
+    let mut moments: Vec<(Vector, Vec<&AppliedLoad>)> = Vec::new();
+    for load in loads.iter().filter(|load| load.wrench.moment.z.abs() > 0.0) {
+        let at = if subject.is_in_place(load) { load.wrench.reference } else { subject.centroid() };
+        match moments.iter_mut().find(|(known, _)| subject.is_same(*known, at)) {
+            Some((_, there)) => there.push(load),
+            None => moments.push((at, vec![load])),
         }
     }
-    if loads.is_empty() || (resultant_is_shown(subject) && greatest <= 0.0) {
-        resultant(canvas, space, subject, view);
-        unsaid = subject.applied().loads.iter().map(|load| in_words(subject, load)).collect();
+    for (at, there) in moments {
+        unsaid.extend(moment(canvas, space, subject, view.spot(at), &there));
     }
     unsaid
 }
@@ -115,7 +129,7 @@ fn rim(space: &Space, view: &View, subject: &Subject<'_>, at: Vector, arrow: Spo
     let from = view.spot(subject.centroid());
     let toward = on_page(at - subject.centroid()).normalize();
     let frame = space.frame().grown(-30.0);
-    let end = clipped(&frame, from, from + toward * 5000.0).map_or(from, |[_, end]| end);
+    let end = clipped(&frame, from, from + toward * BEYOND).map_or(from, |[_, end]| end);
     // The whole arrow stays within the frame.
     let tip = end + arrow;
     let clamped =
@@ -123,21 +137,31 @@ fn rim(space: &Space, view: &View, subject: &Subject<'_>, at: Vector, arrow: Spo
     clamped - arrow
 }
 
+/// The moments at one place: one arrow for their sum.
 fn moment(
     canvas: &mut Canvas,
     space: &mut Space,
     subject: &Subject<'_>,
-    view: &View,
-    load: &AppliedLoad,
-) -> Option<String> {
+    at: Spot,
+    loads: &[&AppliedLoad],
+) -> Vec<String> {
     let units = subject.joint().units;
-    let placed = load.placed && subject.is_near(load.wrench.reference);
-    let at = view.spot(if placed { load.wrench.reference } else { subject.centroid() });
-    LOAD.turn(canvas, at, TURN, load.wrench.moment.z > 0.0);
+    let sum: f64 = loads.iter().map(|load| load.wrench.moment.z).sum();
+    if sum.abs() > 0.0 {
+        LOAD.turn(canvas, at, TURN, sum > 0.0);
+    }
     space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
-    let size = quantity(units, Dimension::Moment, load.wrench.moment.z.abs());
-    let said = say(canvas, space, &name(load), &size, at, TURN, Spot::new(1.0, -1.0));
-    (!said).then(|| in_words(subject, load))
+    let value = quantity(units, Dimension::Moment, sum);
+    let (name, value) = match loads {
+        [load] => (name(load), value),
+        several => (String::new(), format!("{} moments, sum {value}", several.len())),
+    };
+    let said = say(canvas, space, &name, &value, at, TURN, Spot::new(1.0, -1.0));
+    if said && loads.len() == 1 {
+        Vec::new()
+    } else {
+        loads.iter().map(|load| in_words(subject, load)).collect()
+    }
 }
 
 /// The sum of all loads, where they are too many to be drawn.
@@ -145,24 +169,21 @@ fn resultant(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view
     let units = subject.joint().units;
     let load = &subject.case.load;
     let size = load.force.norm();
-    if size > 0.0 {
+    if subject.is_force() {
         let at = subject.foot().unwrap_or_else(|| subject.centroid());
         let near = subject.is_near(at);
         let unit = on_page(load.force).normalize();
         let tail = if near { view.spot(at) } else { rim(space, view, subject, at, unit * LENGTHS.0) };
         LOAD.draw(canvas, tail, tail + unit * LENGTHS.0);
         space.take_along(tail, tail + unit * LENGTHS.0, 5.0);
-        let words = format!(
-            "{} loads, resultant {}",
-            subject.applied().loads.len(),
-            quantity(units, Dimension::Force, size)
-        );
+        let words =
+            format!("{} loads, resultant {}", subject.loads().len(), quantity(units, Dimension::Force, size));
         say(canvas, space, "", &words, tail + unit * (0.5 * LENGTHS.0), 6.0, beside(unit));
     } else if load.moment.z.abs() > 0.0 {
         let at = view.spot(subject.centroid());
         LOAD.turn(canvas, at, TURN, load.moment.z > 0.0);
         space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
-        let size = quantity(units, Dimension::Moment, load.moment.z.abs());
+        let size = quantity(units, Dimension::Moment, load.moment.z);
         say(canvas, space, "", &size, at, TURN, Spot::new(1.0, -1.0));
     }
 }
@@ -190,20 +211,21 @@ fn line_of_action(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>,
         say(canvas, space, "", &words, up, 2.0, Spot::new(0.3, -1.0));
     }
     let centroid = view.spot(subject.centroid());
-    canvas.line(centroid, at, Stroke::solid(Ink::QUIET, 1.0));
-    space.take_line(centroid, at);
-    // A right angle at the foot.
-    let back = (centroid - at).normalize() * 8.0;
-    let side = along * 8.0;
-    canvas.polyline(&[at + back, at + back + side, at + side], Stroke::solid(Ink::QUIET, 1.0));
+    let arm = (at - centroid).norm();
+    if arm > SHORTEST_ARM {
+        canvas.line(centroid, at, Stroke::solid(Ink::QUIET, 1.0));
+        space.take_line(centroid, at);
+        // A right angle at the foot.
+        let back = (centroid - at) / arm * RIGHT_ANGLE;
+        let side = along * RIGHT_ANGLE;
+        canvas.polyline(&[at + back, at + back + side, at + side], Stroke::solid(Ink::QUIET, 1.0));
+    }
     let words = format!("e = {}", length(subject.joint().units, (foot - subject.centroid()).norm()));
     let text = Text { size: SMALL, ink: Ink::QUIET, ..Text::new(&words, Spot::zeros()) };
-    let across = Spot::new(-back.y, back.x);
-    let up = if across.y > 0.0 { -across } else { across };
-    let wish = centroid + (at - centroid) * 0.62;
-    if let Some(placed) = space.label(canvas, &Label { text, wish, reach: 1.0, direction: up })
-        && placed.led
-    {
+    let up = if along.y > 0.0 { -along } else { along };
+    let wish = centroid + (at - centroid) * ALONG_THE_ARM;
+    let placed = space.label(canvas, &Label { text, wish, reach: 1.0, direction: up });
+    if let Some(placed) = placed.filter(|placed| placed.led) {
         super::marks::lead(canvas, wish, &placed.area);
     }
 }

@@ -123,7 +123,7 @@ fn point_off(canvas: &mut Canvas, space: &mut Space, from: Spot, toward: Spot, w
     let unit = toward.normalize();
     let look = Arrow { ink: Ink::ULTIMATE, width: 2.2, head: 12.0 };
     let text = Text { size: SMALL, ink: Ink::ULTIMATE, ..Text::new(words, Spot::zeros()) };
-    // The first place along the ray where the arrow meets nothing; the rim otherwise.
+    // The first place along the ray where the arrow meets nothing; without one only the words remain.
     let mut distance = 20.0;
     let mut chosen = None;
     while chosen.is_none() && distance < 2000.0 {

@@ -29,6 +29,7 @@ use super::sheet;
 use super::space::Space;
 use super::view::View;
 use crate::analysis::{CaseReport, Report};
+use crate::model::AppliedLoad;
 use crate::output::number::length;
 use crate::output::words;
 use crate::solvers::Ultimate;
@@ -38,13 +39,15 @@ use panel::Notes;
 use subject::Subject;
 
 /// Size of the page, px.
-const PAGE: (f64, f64) = (1200.0, 880.0);
+const PAGE: (f64, f64) = (1200.0, 940.0);
 /// Where the group is drawn.
-const FRAME: [f64; 4] = [24.0, 98.0, 838.0, 820.0];
+const FRAME: [f64; 4] = [24.0, 98.0, 838.0, 880.0];
 /// Where the numbers stand.
-const PANEL: [f64; 4] = [852.0, 98.0, 1176.0, 820.0];
+const PANEL: [f64; 4] = [852.0, 98.0, 1176.0, 880.0];
 /// Room around the group for labels, px.
 const MARGIN: f64 = 34.0;
+/// Half the least width of a band, px.
+const WIDENED: Spot = Spot::new(4.0, 4.0);
 /// Room around the centre of rotation for its mark, px.
 const MARK: f64 = 13.0;
 
@@ -77,9 +80,10 @@ fn drawn(report: &Report, case: &CaseReport) -> Canvas {
     marks::draw(&mut canvas, &mut space, &subject, &view);
     dimensions.draw(&mut canvas, &mut space, &subject, &view, &group);
     notes.loads = loads::draw(&mut canvas, &mut space, &subject, &view);
-    notes.remarks.extend(marks::label(&mut canvas, &mut space, &subject, &view));
+    let pointer = marks::label(&mut canvas, &mut space, &subject, &view);
     let missed = welds::label(&mut canvas, &mut space, &subject, &view);
-    notes.remarks.extend(remarks(&subject, &view, missed));
+    notes.remarks = remarks(&subject, &view, missed);
+    notes.remarks.extend(pointer);
     let panel = Area::new(PANEL[0], PANEL[1], PANEL[2], PANEL[3]);
     panel::draw(&mut canvas, &panel, &subject, &forces, &notes);
     sheet::foot(&mut canvas, &report.joint);
@@ -99,8 +103,8 @@ fn laid_out(subject: &Subject<'_>, frame: &Area) -> (View, Forces, Dimensions, A
     let view = View::fit(&needs, about, frame);
     let forces = forces::arrows(subject, &view);
     let (before, after) = overhang(subject, &view, &forces);
-    let (one, other) = (view.spot(subject.least), view.spot(subject.most));
-    let mut group = Area { least: one.inf(&other) - before, most: one.sup(&other) + after };
+    let bands = bands_on_page(subject, &view);
+    let mut group = Area { least: bands.least - before, most: bands.most + after };
     // Measures keep off the centre of rotation, lest they seem to lead to it.
     if let Some(centre) = subject.near_centre() {
         let mark = Area::around(view.spot(centre), Spot::new(2.0 * MARK, 2.0 * MARK));
@@ -109,19 +113,22 @@ fn laid_out(subject: &Subject<'_>, frame: &Area) -> (View, Forces, Dimensions, A
     (view, forces, dimensions, group)
 }
 
-/// How far bands and arrows reach beyond the axes of the welds, px.
+/// How far arrows, and bands drawn wider than to scale, reach beyond the bands to scale, px.
 fn overhang(subject: &Subject<'_>, view: &View, forces: &Forces) -> (Spot, Spot) {
-    let (one, other) = (view.spot(subject.least), view.spot(subject.most));
-    let (least, most) = (one.inf(&other), one.sup(&other));
-    let widest =
-        subject.joint().group.welds().iter().map(|weld| bands::width(weld, view)).fold(0.0, f64::max);
-    let half = Spot::new(widest, widest) / 2.0;
-    let (mut before, mut after) = (half, half);
+    let bands = bands_on_page(subject, view);
+    let (mut before, mut after) = (WIDENED, WIDENED);
     for arrow in &forces.arrows {
-        before = before.sup(&(least - arrow.tip));
-        after = after.sup(&(arrow.tip - most));
+        before = before.sup(&(bands.least - arrow.tip));
+        after = after.sup(&(arrow.tip - bands.most));
     }
     (before, after)
+}
+
+/// The part of the page that the bands fill when they are to scale.
+fn bands_on_page(subject: &Subject<'_>, view: &View) -> Area {
+    let half = subject.half_band();
+    let (one, other) = (view.spot(subject.least - half), view.spot(subject.most + half));
+    Area { least: one.inf(&other), most: one.sup(&other) }
 }
 
 /// What a reader must know about the drawing and the case.
@@ -149,29 +156,28 @@ fn remarks(subject: &Subject<'_>, view: &View, missed: usize) -> Vec<String> {
     if subject.report.deciding_case().is_some_and(|case| !std::ptr::eq(case, subject.case)) {
         remarks.push("Another case decides the joint; the verdict above is the joint's.".to_owned());
     }
-    let far = subject
-        .applied()
-        .loads
-        .iter()
-        .filter(|load| load.wrench.force.norm() > 0.0 && !subject.is_near(load.wrench.reference));
+    let has_place = |load: &&AppliedLoad| load.placed || load.wrench.force.norm() > 0.0;
+    let far = subject.loads().iter().filter(has_place).filter(|load| !subject.is_near(load.wrench.reference));
     if subject.draws_each_load() && far.count() > 0 {
         let distance = length(joint.units, subject.size());
-        remarks.push(format!("A load far from the group ({distance} across) is drawn at the rim."));
+        remarks.push(format!(
+            "A load far from the group ({distance} across) is drawn at the rim; a moment there about the centroid."
+        ));
     }
     remarks
 }
 
 fn about_states(ultimate: &Ultimate) -> Vec<String> {
     let mut remarks = Vec::new();
+    if ultimate.incomplete {
+        remarks
+            .push("A smaller state is possible: the search saw signs of one it could not find.".to_owned());
+    }
     if ultimate.states.len() > 1 {
         remarks.push(format!(
             "{} equilibrium states at first rupture; the smallest is drawn.",
             ultimate.states.len()
         ));
-    }
-    if ultimate.incomplete {
-        remarks
-            .push("A smaller state is possible: the search saw signs of one it could not find.".to_owned());
     }
     remarks
 }

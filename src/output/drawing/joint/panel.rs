@@ -1,9 +1,10 @@
 //! The panel beside the drawing: both methods in numbers, the verdict on the case, key, remarks, sizes of welds.
 
+use super::super::canvas::as_float;
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Text};
 use super::super::font;
-use super::super::ink::{Ink, as_float};
-use super::column::{Column, HEADING, ROW};
+use super::super::ink::Ink;
+use super::column::{Column, HEADING};
 use super::forces::Forces;
 use super::key;
 use super::subject::Subject;
@@ -14,6 +15,8 @@ use crate::output::number::{length, people, point, quantity};
 use crate::output::words;
 use crate::units::Dimension;
 
+/// Distance of the rows of the table, px.
+const TABLE_ROW: f64 = 20.0;
 /// Margin within the panel, px.
 const MARGIN: f64 = 16.0;
 /// Least distance of columns of the table, px.
@@ -57,8 +60,11 @@ fn list(column: &mut Column<'_>, heading: &str, sentences: &[String]) {
         return;
     }
     column.heading(heading);
-    for sentence in sentences {
-        if !column.sentence(sentence, Ink::TEXT) {
+    for (index, sentence) in sentences.iter().enumerate() {
+        let last = index + 1 == sentences.len();
+        // A line stays free for what is left over.
+        if !column.sentence_above(sentence, Ink::TEXT, if last { 0.0 } else { font::LEADING * SMALL }) {
+            column.sentence(&format!("and {} more: see the text", sentences.len() - index), Ink::QUIET);
             break;
         }
     }
@@ -67,9 +73,17 @@ fn list(column: &mut Column<'_>, heading: &str, sentences: &[String]) {
 /// The load about the centroid.
 fn load(column: &mut Column<'_>, subject: &Subject<'_>) {
     let (units, load) = (subject.joint().units, &subject.case.load);
-    let force = point(units, Dimension::Force, &[load.force.x, load.force.y]);
     let moment = quantity(units, Dimension::Moment, load.moment.z);
-    column.sentence(&format!("Load {force}, moment about the centroid {moment}."), Ink::TEXT);
+    // Where the measure is a moment, a force is what rounding leaves of loads that cancel.
+    let words = if subject.is_force() {
+        let force = point(units, Dimension::Force, &[load.force.x, load.force.y]);
+        format!("Load {force}, moment about the centroid {moment}.")
+    } else {
+        format!("Moment {moment}.")
+    };
+    if subject.case.elastic().is_some() {
+        column.sentence(&words, Ink::TEXT);
+    }
 }
 
 /// What decides the case.
@@ -87,7 +101,7 @@ fn methods(column: &mut Column<'_>, subject: &Subject<'_>) {
     let methods = Methods::of(subject.case, subject.joint());
     let middle = column.left + 0.68 * column.room();
     let mut row = |label: &str, left: &str, right: &str, ink: Ink| {
-        let y = column.y + 0.5 * ROW + 0.5 * font::CAPITALS * SMALL;
+        let y = column.y + 0.5 * TABLE_ROW + 0.5 * font::CAPITALS * SMALL;
         let rooms = [(left, middle, 0.5 * column.room()), (right, column.right, column.right - middle - GAP)];
         for (words, x, room) in rooms {
             // A value is never cut; a long one is written smaller.
@@ -101,7 +115,7 @@ fn methods(column: &mut Column<'_>, subject: &Subject<'_>) {
             ink: Ink::QUIET,
             ..Text::new(&label, Spot::new(column.left, y))
         });
-        column.y += ROW;
+        column.y += TABLE_ROW;
     };
     row("", "ultimate", "elastic", Ink::TEXT);
     for (label, [left, right], ink) in [
@@ -141,7 +155,7 @@ fn sizes(column: &mut Column<'_>, subject: &Subject<'_>) {
     while shown > 0 && needed(shown) > lines_left {
         shown -= 1;
     }
-    if needed(shown) > lines_left {
+    if shown == 0 || needed(shown) > lines_left {
         return;
     }
     column.heading("Welds");

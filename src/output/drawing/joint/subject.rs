@@ -3,7 +3,7 @@
 use super::super::canvas::Spot;
 use super::super::view::{Need, on_page};
 use crate::analysis::{CaseReport, Report};
-use crate::model::{Joint, Run, Vector};
+use crate::model::{AppliedLoad, Joint, Run, Vector};
 use crate::solvers::{State, Ultimate};
 
 /// A load may lie this many sizes of the group outside it and still be drawn in place.
@@ -14,8 +14,8 @@ const CENTRE_WITHIN: f64 = 0.65;
 const LABEL_ROOM: f64 = 34.0;
 /// Up to this many loads each has its own arrow; more are drawn as their resultant.
 const MOST_LOADS: usize = 6;
-/// Share of a moment below which a moment about the centroid counts as none.
-const NOTHING: f64 = 1e-9;
+/// Share of the size of the group below which a distance counts as none.
+const SAME: f64 = 1e-9;
 
 /// One joint under one case.
 #[derive(Debug, Clone, Copy)]
@@ -54,6 +54,13 @@ impl<'r> Subject<'r> {
         (self.most - self.least).norm()
     }
 
+    /// Half the width of the widest band at the scale of the drawing, mm in both directions.
+    pub(super) fn half_band(&self) -> Vector {
+        let welds = self.joint().group.welds();
+        let widest = welds.iter().map(|weld| weld.size.deformation_size()).fold(0.0, f64::max);
+        Vector::new(widest, widest, 0.0) / 2.0
+    }
+
     /// The state that is reported.
     pub(super) fn state(&self) -> Option<&'r State> {
         self.case.ultimate().map(Ultimate::governing)
@@ -69,32 +76,46 @@ impl<'r> Subject<'r> {
         self.centre().filter(|centre| self.distance(*centre) <= CENTRE_WITHIN * self.size())
     }
 
-    /// Points of application of the forces, each once, that are near enough to be drawn in place; the foot of the
-    /// resultant where the loads are too many.
+    /// The loads of the case as the joint holds them.
+    pub(super) fn loads(&self) -> &'r [AppliedLoad] {
+        let cases = &self.joint().cases;
+        cases.iter().find(|case| case.name == self.case.name).map_or(&[], |case| &case.loads)
+    }
+
+    /// Whether every load has its own arrow.
+    pub(super) fn draws_each_load(&self) -> bool {
+        self.loads().len() <= MOST_LOADS
+    }
+
+    /// Whether the load of the case is a force, by the measure in which its strength is told.
+    pub(super) fn is_force(&self) -> bool {
+        self.case.load_times(1.0).is_some_and(|(_, in_moment)| !in_moment)
+    }
+
+    /// Whether a load has a place of its own that is near enough to be drawn there.
+    pub(super) fn is_in_place(&self, load: &AppliedLoad) -> bool {
+        let placed = load.placed || load.wrench.force.norm() > 0.0;
+        placed && self.is_near(load.wrench.reference)
+    }
+
+    /// Places of loads that are drawn there, each once; the foot of the resultant where the loads are too many.
     pub(super) fn near_loads(&self) -> Vec<Vector> {
         if !self.draws_each_load() {
             return self.foot().filter(|foot| self.is_near(*foot)).into_iter().collect();
         }
         let mut points: Vec<Vector> = Vec::new();
-        for load in &self.applied().loads {
+        for load in self.loads().iter().filter(|load| self.is_in_place(load)) {
             let at = load.wrench.reference;
-            let near = load.wrench.force.norm() > 0.0 && self.is_near(at);
-            if near && !points.iter().any(|known| (known - at).norm() <= NOTHING * self.size()) {
+            if !points.iter().any(|known| self.is_same(*known, at)) {
                 points.push(at);
             }
         }
         points
     }
 
-    /// The case as the joint holds it.
-    pub(super) fn applied(&self) -> &'r crate::model::LoadCase {
-        let cases = &self.joint().cases;
-        cases.iter().find(|case| case.name == self.case.name).unwrap_or(&cases[0])
-    }
-
-    /// Whether every load has its own arrow.
-    pub(super) fn draws_each_load(&self) -> bool {
-        self.applied().loads.len() <= MOST_LOADS
+    /// Whether two points are one on the page.
+    pub(super) fn is_same(&self, one: Vector, other: Vector) -> bool {
+        (one - other).norm() <= SAME * self.size()
     }
 
     /// Whether a load at a point is drawn there.
@@ -112,22 +133,24 @@ impl<'r> Subject<'r> {
     /// or where the line passes through the centroid.
     pub(super) fn foot(&self) -> Option<Vector> {
         let (force, moment) = (self.case.load.force, self.case.load.moment.z);
-        let size = force.norm();
-        let eccentricity = moment.abs() / size;
-        (size > 0.0 && eccentricity > 0.02 * self.size() && eccentricity.is_finite()).then(|| {
-            // M = r x F with r across F: r = (F_y, -F_x) (-M) / F^2 turned to its sense.
-            self.centroid() + Vector::new(-force.y, force.x, 0.0) * (-moment / (size * size))
+        let eccentricity = moment.abs() / force.norm();
+        (self.is_force() && eccentricity > SAME * self.size()).then(|| {
+            // r x F = M with r across F: r = (F_y, -F_x) M / F^2.
+            self.centroid() + Vector::new(force.y, -force.x, 0.0) * (moment / force.norm_squared())
         })
     }
 
     /// What must be seen: the welds' box and the centre with room before and after them, the loads with their arrows.
     pub(super) fn needs(&self, before: Spot, after: Spot) -> Vec<Need> {
-        let mut needs = vec![Need { at: self.least, before, after }, Need { at: self.most, before, after }];
+        let mut needs = vec![
+            Need { at: self.least - self.half_band(), before, after },
+            Need { at: self.most + self.half_band(), before, after },
+        ];
         needs.extend(self.near_centre().map(|at| Need { at, before, after }));
         let around = Spot::new(LABEL_ROOM, LABEL_ROOM);
         for at in self.near_loads() {
-            let forces = self.applied().loads.iter().map(|load| load.wrench);
-            let there = forces.filter(|load| (load.reference - at).norm() <= NOTHING * self.size());
+            let forces = self.loads().iter().map(|load| load.wrench);
+            let there = forces.filter(|load| self.is_same(load.reference, at));
             let mut need = Need { at, before: around, after: around };
             for force in there.map(|load| load.force).chain([self.case.load.force]) {
                 if force.norm() > 0.0 {
