@@ -32,7 +32,10 @@ fn form(path: &Path) -> Option<Form> {
 pub(super) fn path(text: &str) -> Result<PathBuf, String> {
     let path = PathBuf::from(text);
     match form(&path) {
-        Some(_) => Ok(path),
+        Some(Form::Png) if !cfg!(feature = "png") => {
+            Err("this program was built without PNG; accepted: a name that ends in .svg".to_owned())
+        }
+        Some(Form::Svg | Form::Png) => Ok(path),
         None => Err(format!("accepted: {ACCEPTED}")),
     }
 }

@@ -8,14 +8,11 @@ use super::source::{Source, Text};
 use super::{VERSION, colour, figure, message};
 use weldpole::diagnostic::Diagnostic;
 use weldpole::input::Template;
-use weldpole::output::{sweep_csv, sweep_json, sweep_svg, sweep_text};
+use weldpole::output::{sweep_csv, sweep_json, sweep_point, sweep_svg, sweep_text};
 use weldpole::study::sweep::{GroupedFault, Sweep, sweep};
 
 /// Values of a variable named beside a fault of many points.
 const MOST_NAMED: usize = 3;
-
-/// Decimals beyond which a value is rounding.
-const NINE_DECIMALS: f64 = 1e9;
 
 /// Sweeps the joint and writes the results.
 pub(super) fn run(arguments: &SweepArguments) -> Exit {
@@ -30,25 +27,28 @@ pub(super) fn run(arguments: &SweepArguments) -> Exit {
         }
     };
     let outcome = swept(arguments, &text);
-    let (exit, written) = match &outcome {
+    let mut written: Vec<Result<(), Box<Diagnostic>>> = Vec::new();
+    let mut exit = match &outcome {
         Ok(sweep) => {
             for fault in sweep.faults() {
                 show(&fault, sweep, &text, columns);
             }
-            (Exit::from(sweep.verdict()), write(arguments, Some(sweep), &[]))
+            written.extend(arguments.figure.as_ref().map(|path| figure::write(path, &sweep_svg(sweep))));
+            written.push(write(arguments, Some(sweep), &[]));
+            Exit::from(sweep.verdict())
         }
         Err(faults) => {
             message::show(faults, Some(&text), columns);
-            (Exit::NoAnswer, write(arguments, None, faults))
-        }
-    };
-    match written {
-        Ok(()) => exit,
-        Err(refusal) => {
-            message::refuse(&refusal, columns);
+            written.push(write(arguments, None, faults));
             Exit::NoAnswer
         }
+    };
+    // A figure that cannot be written takes no results with it.
+    for refusal in written.into_iter().filter_map(Result::err) {
+        message::refuse(&refusal, columns);
+        exit = Exit::NoAnswer;
     }
+    exit
 }
 
 fn source(arguments: &SweepArguments) -> Source {
@@ -68,14 +68,8 @@ fn swept(arguments: &SweepArguments, text: &Text) -> Result<Sweep, Vec<Diagnosti
 /// Shows a fault once, and at which points it stands.
 fn show(found: &GroupedFault, sweep: &Sweep, text: &Text, columns: usize) {
     message::show(std::slice::from_ref(&found.fault), Some(text), columns);
-    let mut places: Vec<String> = Vec::new();
-    for point in found.points.iter().take(MOST_NAMED).filter_map(|index| sweep.points.get(*index)) {
-        let values = sweep.variables.iter().zip(&point.values).map(|(variable, value)| {
-            let shown = (variable.shown(*value) * NINE_DECIMALS).round() / NINE_DECIMALS;
-            format!("{} = {shown} {}", variable.name, variable.unit).trim_end().to_owned()
-        });
-        places.push(values.collect::<Vec<_>>().join(", "));
-    }
+    let places: Vec<String> =
+        found.points.iter().take(MOST_NAMED).map(|index| sweep_point(sweep, *index)).collect();
     let count = found.points.len();
     let more = if count > MOST_NAMED { "; ..." } else { "" };
     let noun = if count == 1 { "point" } else { "points" };
@@ -87,9 +81,6 @@ fn write(
     sweep: Option<&Sweep>,
     faults: &[Diagnostic],
 ) -> Result<(), Box<Diagnostic>> {
-    if let (Some(path), Some(sweep)) = (&arguments.figure, sweep) {
-        figure::write(path, &sweep_svg(sweep))?;
-    }
     let results = Destination::from(arguments.output.as_ref());
     let figure_takes_standard_output = arguments.figure.as_ref().is_some_and(|path| path.as_os_str() == "-");
     if figure_takes_standard_output && results == Destination::StandardOutput {

@@ -36,5 +36,5 @@ pub use json::check_json;
 pub use layout::{Emphasis, Layout, Painter, plain};
 pub use rules::{law_text, rule_set_text, rules_json, rules_text};
 pub use selfcheck::{selfcheck_csv, selfcheck_json, selfcheck_text};
-pub use sweep::{sweep_csv, sweep_json, sweep_text};
+pub use sweep::{sweep_csv, sweep_json, sweep_point, sweep_text};
 pub use text::check_text;

@@ -166,7 +166,7 @@ pub(super) fn leg(units: UnitSystem, value: f64) -> String {
     #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss)] // between 1 and 32
     let mut top = whole as u32;
     let mut bottom = 16;
-    while top % 2 == 0 && bottom > 1 {
+    while top.is_multiple_of(2) && bottom > 1 {
         (top, bottom) = (top / 2, bottom / 2);
     }
     let unit = units.symbol(Dimension::Length);

@@ -49,7 +49,7 @@ impl Arrow {
         canvas.polygon(&[tip, neck + across, neck - across], Some(self.ink), None);
     }
 
-    /// Draws three quarters of a turn about a point; `anticlockwise` as seen on the page.
+    /// Draws 250 degrees of a turn about a point, anticlockwise as seen on the page or clockwise.
     pub(super) fn turn(&self, canvas: &mut Canvas, middle: Spot, radius: f64, anticlockwise: bool) {
         // On the page y points down, so a rising angle turns clockwise.
         let sense = if anticlockwise { -1.0 } else { 1.0 };

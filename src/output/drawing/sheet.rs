@@ -15,7 +15,7 @@ const TITLE: f64 = 21.0;
 const CAUTION: &str = "Static strength of fillet welds between rigid parts; no fatigue, fracture or seismic detailing. \
                        Supports, and does not replace, the judgement of a licensed engineer under the code in force.";
 
-/// The verdict, the title, and a sentence of up to two lines.
+/// The verdict, the title, and a sentence that is cut where it is longer than the page.
 pub(super) fn head(canvas: &mut Canvas, verdict: Option<(&str, Emphasis)>, title: &str, sentence: &str) {
     let page = canvas.page();
     let right = page.most.x - MARGIN;
@@ -30,14 +30,8 @@ pub(super) fn head(canvas: &mut Canvas, verdict: Option<(&str, Emphasis)>, title
     }
     let title = font::clipped(title, TITLE, right - left);
     canvas.text(&Text { size: TITLE, ..Text::new(&title, Spot::new(left, 40.6)) });
-    let lines = font::lines(sentence, SMALL, right - MARGIN);
-    let shown: Vec<String> = if lines.len() > 1 {
-        // One line, cut where it is longer.
-        vec![font::clipped(sentence, SMALL, right - MARGIN)]
-    } else {
-        lines
-    };
-    canvas.lines(&shown, Spot::new(MARGIN, 72.0), SMALL, Ink::TEXT);
+    let sentence = font::clipped(sentence, SMALL, right - MARGIN);
+    canvas.text(&Text { size: SMALL, ..Text::new(&sentence, Spot::new(MARGIN, 72.0)) });
     canvas.line(Spot::new(MARGIN, 85.0), Spot::new(right, 85.0), Stroke::solid(Ink::TEXT, 1.4));
 }
 

@@ -15,7 +15,7 @@ const TITLES: [&str; 18] = [
     "shape",
     "k",
     "a",
-    "load_angle_deg",
+    "load_angle_from_vertical_deg",
     "quantity",
     "unit",
     "expected",

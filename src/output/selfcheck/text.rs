@@ -12,6 +12,10 @@ use crate::output::table::{Cell, Side, Table, hanging, labelled};
 use crate::output::text::cautions;
 use crate::study::selfcheck::{Outcome, SelfCheck};
 
+/// What the program cannot know, for whoever files the page: it reads no clock and no machine.
+const SIGNATURES: &str = "Run on (machine)  ______________________    Date  ______________________\n\n\
+                          Filed by (name)   ______________________    Sign  ______________________\n";
+
 /// The self-check of the program of this version as text.
 #[must_use]
 pub fn selfcheck_text(version: &str, check: &SelfCheck, layout: &Layout) -> String {
@@ -30,6 +34,7 @@ pub fn selfcheck_text(version: &str, check: &SelfCheck, layout: &Layout) -> Stri
     }
     blocks.push(remarks(check, layout));
     blocks.push(cautions::text(layout));
+    blocks.push(SIGNATURES.to_owned());
     blocks.join("\n")
 }
 

@@ -16,6 +16,14 @@ mod matrix;
 pub(super) mod summary;
 mod text;
 
+use crate::study::sweep::Sweep;
+
 pub use csv::sweep_csv;
 pub use json::sweep_json;
 pub use text::sweep_text;
+
+/// Where a point of a sweep is: `arm = 150 mm, load.angle = 45 deg`.
+#[must_use]
+pub fn sweep_point(sweep: &Sweep, point: usize) -> String {
+    labels::Labels::new(sweep).point(point)
+}

@@ -15,7 +15,7 @@ fn a_parameter_is_varied_and_the_worst_point_sets_the_status() {
     desk.put("a.toml", bracket());
     let outcome = desk.run(&["sweep", "a.toml", "--vary", "reach=150mm:250mm:3"]).ends_with(0);
     assert!(outcome.stdout.starts_with("SWEEP       Two lines\n"), "{}", outcome.stdout);
-    assert!(outcome.stdout.contains("reach from 150 mm to 250 mm, 3 values; the file has 250 mm"));
+    assert!(outcome.stdout.contains("reach from 150 mm to 250 mm, 3 values; 250 mm as given"));
     assert!(outcome.stdout.contains("licensed engineer"), "{}", outcome.stdout);
     assert!(outcome.stderr.is_empty(), "{}", outcome.stderr);
     let outcome = desk.run(&["sweep", "a.toml", "--vary", "p=60kN:600kN:2"]).ends_with(1);

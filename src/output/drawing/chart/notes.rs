@@ -105,8 +105,8 @@ fn sentences(sweep: &Sweep) -> Vec<String> {
     let other = sweep.in_other_measure();
     if other > 0 {
         let noun = if sweep.in_moment() { "force" } else { "moment alone" };
-        sentences
-            .push(format!("{other} points at which the load is a {noun} are left out of the strengths."));
+        let points = if other == 1 { "1 point".to_owned() } else { format!("{other} points") };
+        sentences.push(format!("{points} with a {noun} for a load: left out of the strengths."));
     }
     sentences.extend(summary::sentences(sweep, &Labels::new(sweep)));
     sentences.extend(summary::out_of_the_ordinary(sweep));

@@ -93,6 +93,7 @@ fn ticks_in_degrees([least, most]: [f64; 2], count: usize) -> Vec<f64> {
     let step = STEPS_IN_DEGREES.iter().find(fits).filter(|step| most - least >= 2.0 * **step);
     let Some(step) = step else { return ticks([least, most], count) };
     let mut found = Vec::new();
+    // The range is a fair part of the step at least, so the ticks are few.
     let mut tick = (least / step - 1e-9).ceil() * step;
     while tick <= most + 1e-9 * step {
         found.push(tick + 0.0);

@@ -194,6 +194,9 @@ fn line_of_action(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>,
     let along = on_page(subject.case.load.force).normalize();
     let at = view.spot(foot);
     let frame = space.frame().grown(-10.0);
+    if !frame.contains(at) {
+        return;
+    }
     let mut reach = [0.0_f64, 0.0];
     for near in subject.near_loads() {
         let distance = (view.spot(near) - at).dot(&along);

@@ -77,7 +77,8 @@ fn load(column: &mut Column<'_>, subject: &Subject<'_>) {
     // Where the measure is a moment, a force is what rounding leaves of loads that cancel.
     let words = if subject.is_force() {
         let force = point(units, Dimension::Force, &[load.force.x, load.force.y]);
-        format!("Load {force}, moment about the centroid {moment}.")
+        let arm = subject.foot().map_or(0.0, |foot| (foot - subject.centroid()).norm());
+        format!("Load {force}, moment about the centroid {moment}, e = {}.", length(units, arm))
     } else {
         format!("Moment {moment}.")
     };
