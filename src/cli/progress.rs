@@ -31,7 +31,10 @@ impl Progress {
         let Ok(mut last) = self.last.try_lock() else { return };
         if self.on_terminal && last.elapsed() >= PAUSE {
             *last = Instant::now();
-            write(&format!("{CLEAR}{done} of {} {}", self.total, self.noun));
+            let (total, noun) = (self.total, self.noun);
+            let beyond = done.saturating_sub(total);
+            let more = if beyond > 0 { format!(", {beyond} more to locate jumps") } else { String::new() };
+            write(&format!("{CLEAR}{} of {total} {noun}{more}", done.min(total)));
         }
     }
 

@@ -257,6 +257,16 @@ fn a_jump_between_points_of_one_state_is_found() {
 }
 
 #[test]
+fn a_load_that_passes_through_zero_is_no_jump() {
+    // Nearly symmetric about zero: the load factor has a pole there, the strength has not.
+    let text = "units = \"metric\"\nrules = \"nominal\"\n[parameters]\np = \"100 kN\"\n[filler]\nstrength = 490\n\
+        [[weld]]\nname = \"left\"\nleg = 6\npath = [[-75, -50], [-75, 50]]\n\
+        [[weld]]\nname = \"right\"\nleg = 6\npath = [[75, -50], [75, 50]]\n\
+        [[load]]\ncase = \"pull\"\nat = [\"2 mm / cos(10 deg)\", 0]\nforce = [\"p*cos(80 deg)\", \"p*sin(80 deg)\"]\n";
+    assert!(swept(text, &["p=-1.0000001kN:1kN:2"]).jumps.is_empty());
+}
+
+#[test]
 fn a_smooth_curve_has_no_jump() {
     for ranges in [
         &["reach=1 in:30 in:30"][..],

@@ -1,6 +1,6 @@
 //! Which analysis decides, and stories of joints that were once answered wrongly or not at all.
 
-use weldpole::analysis::{CaseReport, Report, Status, analyse};
+use weldpole::analysis::{CaseReport, Grade, Report, Status, analyse};
 use weldpole::input::{Options, read_joint};
 use weldpole::model::Basis;
 
@@ -208,4 +208,43 @@ force = [0, 1]
     let report = report(&joint("rules = \"nominal\"", welds));
     let says = |text: &str| report.findings.iter().any(|finding| finding.message.contains(text));
     assert!(says("lies on the weld far") && says("117 legs long"));
+}
+
+#[test]
+fn a_verdict_that_rests_on_concentricity_alone_gets_a_caution() {
+    // Two lines pulled ten degrees off their direction: several states, and the rule for concentric loads gives more.
+    let lines = |x: f64| {
+        format!(
+            "
+[[weld]]
+name = \"left\"
+leg = 6
+path = [[-75, -50], [-75, 50]]
+[[weld]]
+name = \"right\"
+leg = 6
+path = [[75, -50], [75, 50]]
+[[load]]
+case = \"pull\"
+at = [{x}, 0]
+force = {{ size = 170, angle = 80 }}
+"
+        )
+    };
+    let says = |report: &Report| {
+        report.findings.iter().any(|finding| {
+            finding.grade == Grade::Caution
+                && finding.message.contains("a rule for loads through the centroid alone")
+        })
+    };
+    let rules = "rules = \"aisc-360-22-lrfd\"";
+    let concentric = report(&joint(rules, &lines(0.0)));
+    assert_eq!(only(&concentric).status, Status::Satisfied);
+    assert!(says(&concentric));
+    let beside = report(&joint(rules, &lines(0.5)));
+    assert_eq!(only(&beside).status, Status::Exceeded);
+    assert!(!says(&beside));
+    // With half the load the other verification holds as well, and nothing rests on concentricity.
+    let half = report(&joint(rules, &lines(0.0).replace("170", "85")));
+    assert!(only(&half).status == Status::Satisfied && !says(&half));
 }

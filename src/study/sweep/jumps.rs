@@ -98,15 +98,23 @@ fn shown_case(point: &Point, shown: usize) -> Option<&PointCase> {
     point.outcome.as_ref().ok()?.cases.get(shown)
 }
 
-/// The jumps of the case `shown`, along the first variable first, each in the order of the points.
-pub(super) fn find(task: &Task<'_>, points: &[Point], shown: usize) -> Vec<Jump> {
+/// The jumps of the case `shown`, along the first variable first, each in the order of the points. `progress` hears
+/// the number of all analyses so far, those of the points included.
+pub(super) fn find(
+    task: &Task<'_>,
+    points: &[Point],
+    shown: usize,
+    progress: &(dyn Fn(usize) + Sync),
+) -> Vec<Jump> {
+    let mut analysed = points.len();
     let halvings = if task.variables.len() == 1 { HALVINGS } else { HALVINGS_OF_TWO };
     let mut open: Vec<Interval> =
         (0..task.variables.len()).flat_map(|variable| suspicious(task, points, shown, variable)).collect();
     for made in 1..=halvings {
         let middles: Vec<Vec<f64>> =
             open.iter().map(|interval| middle(interval, &points[interval.points[0]])).collect();
-        let solved = task.solve(&middles, &|_| ());
+        let solved = task.solve(&middles, &|done| progress(analysed + done));
+        analysed += middles.len();
         open = open
             .into_iter()
             .zip(&solved)

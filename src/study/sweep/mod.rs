@@ -91,7 +91,8 @@ pub struct Sweep {
 /// Analyses the joint at every point of the variables, in parallel; the answer does not depend on the number of
 /// threads.
 ///
-/// `case` names the one case to analyse; `None` means all. `progress` hears how many points are done.
+/// `case` names the one case to analyse; `None` means all. `progress` hears how many points are done, and, beyond
+/// their number, how many more analyses the search for jumps took.
 ///
 /// # Errors
 /// A case that does not exist; a load name varied for a case without a force.
@@ -109,7 +110,7 @@ pub fn sweep(
     let points = task.solve(&grid(variables), progress);
     let as_given = || analyse(joint).governing.unwrap_or(0);
     let shown = if only.is_some() { 0 } else { most_governing(&points).unwrap_or_else(as_given) };
-    let jumps = jumps::find(&task, &points, shown);
+    let jumps = jumps::find(&task, &points, shown, progress);
     Ok(Sweep { joint: joint.clone(), variables: variables.to_vec(), cases, shown, points, jumps })
 }
 

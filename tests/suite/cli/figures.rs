@@ -82,3 +82,14 @@ fn what_cannot_be_drawn_is_refused_with_what_is_accepted() {
         assert_eq!(desk.names(), ["a.toml", "b.toml"], "{arguments:?}");
     }
 }
+
+#[test]
+fn a_figure_that_cannot_be_written_takes_no_results_with_it() {
+    let desk = Desk::new("figure-lost");
+    desk.put("a.toml", BRACKET);
+    let outcome = desk
+        .run(&["sweep", "a.toml", "--vary", "p=60kN:70kN:2", "--figure", "nowhere/a.svg", "-o", "a.txt"])
+        .ends_with(2);
+    assert!(outcome.stderr.contains("nowhere/a.svg"), "{}", outcome.stderr);
+    assert!(desk.read("a.txt").starts_with("SWEEP"));
+}
