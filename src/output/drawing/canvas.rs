@@ -67,12 +67,6 @@ impl Area {
     }
 }
 
-/// A small count as a number.
-pub(super) fn as_float(count: usize) -> f64 {
-    // Counts of a drawing are far below 2^32.
-    u32::try_from(count).map_or(f64::INFINITY, f64::from)
-}
-
 /// How a line is drawn.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub(super) struct Stroke {

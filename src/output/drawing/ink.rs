@@ -5,7 +5,7 @@
 //!
 //! Lightness: `L = 0.2126 R' + 0.7152 G' + 0.0722 B'` of the linear components. Source: IEC 61966-2-1 (sRGB).
 
-use super::canvas::as_float;
+use super::count::as_float;
 
 /// A colour in sRGB.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]

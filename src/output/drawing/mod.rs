@@ -7,7 +7,7 @@
 //! | `ink.rs` | colours |
 //! | `space.rs` | where on the page there is room for a text |
 //! | `view.rs` | from the joint's plane to the page |
-//! | `arrow.rs`, `sheet.rs` | arrows; what all pages have in common |
+//! | `arrow.rs`, `sheet.rs`, `count.rs` | arrows; what all pages have in common; counts as numbers |
 //! | `joint/` | a joint under a case |
 //! | `chart/` | a sweep: curves and maps |
 //! | `png.rs` | SVG to PNG (feature `png`) |
@@ -17,6 +17,7 @@
 mod arrow;
 mod canvas;
 mod chart;
+mod count;
 mod font;
 mod ink;
 mod joint;

@@ -101,7 +101,7 @@ impl Space {
                 if best.as_ref().is_some_and(|(known, _)| *known <= cost) || !self.is_free(&area) {
                     continue;
                 }
-                let cost = cost + CROSSING * super::canvas::as_float(self.crossings(&area));
+                let cost = cost + CROSSING * super::count::as_float(self.crossings(&area));
                 if best.as_ref().is_none_or(|(known, _)| cost < *known) {
                     best = Some((cost, Placed { area, wish, led: ring >= LEADER }));
                 }

@@ -130,7 +130,7 @@ impl Field {
 }
 
 fn place(column: usize, row: usize) -> Place {
-    [super::super::canvas::as_float(column), super::super::canvas::as_float(row)]
+    [super::super::count::as_float(column), super::super::count::as_float(row)]
 }
 
 fn rectangle([[x, y], [to_x, to_y]]: [Place; 2]) -> Vec<Place> {

@@ -3,8 +3,8 @@
 //! A line of contour is where the value, linear between solved points, is the number at it. A step stands where the
 //! strength jumps; where a point has no answer the map is blank.
 
-use super::super::canvas::as_float;
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text, outline};
+use super::super::count::as_float;
 use super::super::font;
 use super::super::ink::{Ink, ramp};
 use super::super::sheet;

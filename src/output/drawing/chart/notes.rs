@@ -1,7 +1,7 @@
 //! What the drawing of a sweep says in words.
 
-use super::super::canvas::as_float;
 use super::super::canvas::{Area, BODY, Canvas, SMALL, Spot, Stroke, Text};
+use super::super::count::as_float;
 use super::super::font;
 use super::super::ink::Ink;
 use super::plot::Mark;

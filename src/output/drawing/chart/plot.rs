@@ -89,7 +89,7 @@ pub(super) fn ticks(range: [f64; 2], most: usize) -> Vec<f64> {
 
 /// Round numbers of degrees within a range, at most so many; those of other units where the range is small.
 fn ticks_in_degrees([least, most]: [f64; 2], count: usize) -> Vec<f64> {
-    let fits = |step: &&f64| (most - least) / **step + 1.0 <= super::super::canvas::as_float(count);
+    let fits = |step: &&f64| (most - least) / **step + 1.0 <= super::super::count::as_float(count);
     let step = STEPS_IN_DEGREES.iter().find(fits).filter(|step| most - least >= 2.0 * **step);
     let Some(step) = step else { return ticks([least, most], count) };
     let mut found = Vec::new();
@@ -207,7 +207,7 @@ impl Plot {
     fn y_ticks(&self) -> Vec<f64> {
         let room = self.area.size().y / (1.9 * SMALL);
         let mut most = MOST_TICKS;
-        while super::super::canvas::as_float(most) > room && most > 2 {
+        while super::super::count::as_float(most) > room && most > 2 {
             most -= 1;
         }
         self.ticks(1, most)

@@ -3,8 +3,8 @@
 //! Neighbouring cells of one shade are drawn as one piece. A band narrower than [`THINNEST`] px is drawn that wide,
 //! and the drawing says so. The run that ruptures first is drawn last: its shade is the one seen at a corner.
 
-use super::super::canvas::as_float;
 use super::super::canvas::{Area, Canvas, Spot, Stroke, spot};
+use super::super::count::as_float;
 use super::super::ink::{Ink, ramp};
 use super::super::space::Space;
 use super::super::view::{View, on_page};

@@ -1,7 +1,7 @@
 //! A column of headings, sentences and symbols, written from top to bottom.
 
-use super::super::canvas::as_float;
 use super::super::canvas::{BODY, Canvas, SMALL, Spot, Stroke, Text};
+use super::super::count::as_float;
 use super::super::font;
 use super::super::ink::Ink;
 

@@ -65,7 +65,7 @@ impl Dimensions {
 
     /// Room needed left and above, right and below of the group, px.
     pub(super) fn room(&self) -> (Spot, Spot) {
-        let depth = |rows: &Rows| ROW * super::super::canvas::as_float(rows.rows.len());
+        let depth = |rows: &Rows| ROW * super::super::count::as_float(rows.rows.len());
         let (across, up) = (depth(&self.across), depth(&self.up));
         let split = |beyond: bool, depth: f64| if beyond { (0.0, depth) } else { (depth, 0.0) };
         let (below, above) = split(self.across.beyond, across);
@@ -84,7 +84,7 @@ impl Dimensions {
     ) {
         for rows in [&self.across, &self.up] {
             for (index, places) in rows.rows.iter().enumerate() {
-                let offset = 12.0 + ROW * super::super::canvas::as_float(index);
+                let offset = 12.0 + ROW * super::super::count::as_float(index);
                 row(canvas, space, subject, view, rows, places, group, offset);
             }
         }

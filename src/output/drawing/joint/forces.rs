@@ -96,7 +96,7 @@ fn chosen<'r>(subject: &Subject<'r>, view: &View) -> Vec<&'r ElementRow> {
 /// How far arrows lie along their weld, 0 to 1, by their mean cosine.
 fn along(rows: &[ElementRow]) -> f64 {
     let cosines: Vec<f64> = rows.iter().filter_map(|row| row.angle).map(f64::cos).collect();
-    let mean = cosines.iter().sum::<f64>() / super::super::canvas::as_float(cosines.len().max(1));
+    let mean = cosines.iter().sum::<f64>() / super::super::count::as_float(cosines.len().max(1));
     ((mean - MOSTLY_ALONG) / (1.0 - MOSTLY_ALONG)).max(0.0).powi(2)
 }
 

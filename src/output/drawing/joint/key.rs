@@ -1,8 +1,8 @@
 //! The key: shades, arrows and marks, and where the marks stand.
 
 use super::super::arrow::Arrow;
-use super::super::canvas::as_float;
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text};
+use super::super::count::as_float;
 use super::super::ink::{Ink, ramp};
 use super::bands;
 use super::column::Column;

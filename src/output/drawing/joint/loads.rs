@@ -11,13 +11,11 @@ use super::super::font;
 use super::super::ink::Ink;
 use super::super::space::{Label, Space, clipped};
 use super::super::view::{View, on_page};
-use super::subject::Subject;
+use super::subject::{LENGTHS, Subject};
 use crate::model::{AppliedLoad, Vector};
 use crate::output::number::{length, point, quantity, trimmed};
 use crate::units::Dimension;
 
-/// Length of the longest and shortest load arrow, px.
-pub(super) const LENGTHS: (f64, f64) = (84.0, 38.0);
 /// Radius of the arrow of a moment, px.
 const TURN: f64 = 22.0;
 

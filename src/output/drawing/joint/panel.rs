@@ -1,7 +1,7 @@
 //! The panel beside the drawing: both methods in numbers, the verdict on the case, key, remarks, sizes of welds.
 
-use super::super::canvas::as_float;
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Text};
+use super::super::count::as_float;
 use super::super::font;
 use super::super::ink::Ink;
 use super::column::{Column, HEADING};

@@ -10,6 +10,8 @@ use crate::solvers::{State, Ultimate};
 const LOADS_WITHIN: f64 = 1.7;
 /// The same for the centre of rotation.
 const CENTRE_WITHIN: f64 = 0.65;
+/// Length of the longest and shortest load arrow, px.
+pub(super) const LENGTHS: (f64, f64) = (84.0, 38.0);
 /// Room around a load for its words, px.
 const LABEL_ROOM: f64 = 34.0;
 /// Up to this many loads each has its own arrow; more are drawn as their resultant.
@@ -154,7 +156,7 @@ impl<'r> Subject<'r> {
             let mut need = Need { at, before: around, after: around };
             for force in there.map(|load| load.force).chain([self.case.load.force]) {
                 if force.norm() > 0.0 {
-                    let arrow = on_page(force).normalize() * (super::loads::LENGTHS.0 + 8.0);
+                    let arrow = on_page(force).normalize() * (LENGTHS.0 + 8.0);
                     need.before = need.before.sup(&-arrow);
                     need.after = need.after.sup(&arrow);
                 }
