@@ -136,6 +136,8 @@ impl CaseReport {
     #[must_use]
     pub fn coefficients(&self, joint: &Joint) -> Option<Coefficients> {
         let weld = joint.group.uniform()?;
+        // Where the measure is a moment, a force is what rounding leaves of loads that cancel.
+        self.load_times(1.0).filter(|(_, in_moment)| !in_moment)?;
         let resultant = self.load.force.norm() * self.ultimate()?.governing().load_factor;
         let per_length = joint.rules.longitudinal.value * weld.filler.strength * weld.size.throat();
         let length: f64 = joint.group.welds().iter().map(|weld| weld.length() * f64::from(weld.sides)).sum();

@@ -63,6 +63,7 @@ pub(super) fn confirmation(status: Confirmation) -> &'static str {
 pub(super) fn discretisation(joint: &Joint) -> String {
     match joint.discretisation {
         Discretisation::Continuous => "continuous".to_owned(),
+        Discretisation::Elements(1) => "1 mid-point element on the longest run".to_owned(),
         Discretisation::Elements(count) => format!("{count} mid-point elements on the longest run"),
     }
 }
@@ -141,7 +142,7 @@ fn law_in_brief(joint: &Joint) -> String {
 pub(in crate::output) fn ratio(ratio: f64) -> String {
     let share = 1.0 - 1.0 / ratio;
     if share.abs() < 0.0005 {
-        "Both methods give the same nominal strength.".to_owned()
+        "Both methods give practically the same nominal strength.".to_owned()
     } else if share > 0.0 {
         format!("The elastic method leaves {} of the ultimate strength unused.", percent(share))
     } else {

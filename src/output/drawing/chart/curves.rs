@@ -117,7 +117,9 @@ fn ratio(canvas: &mut Canvas, sweep: &Sweep, variable: &Variable, x: [f64; 2]) {
     let no_jump = |_: &Jump, _: usize| None;
     let quantity =
         Quantity { sweep, variable, value: &value, follows: &all, at_jump: &no_jump, joined: &always };
-    let [least, most] = range(quantity.values().into_iter().chain([1.0]));
+    let values = quantity.values();
+    // Without a value the line at 1 stands alone.
+    let [least, most] = if values.is_empty() { [0.5, 1.5] } else { range(values.into_iter().chain([1.0])) };
     let margin = 0.1 * (most - least);
     let plot = Plot::new(area(1), x, [least - margin, most + margin]).in_units(&variable.unit, "");
     plot.axes(canvas, None, "ultimate / elastic");

@@ -1,9 +1,9 @@
 //! Values on a grid of points as regions above a level and lines at it.
 //!
 //! A cell between four points is cut into four triangles about its middle, whose value is their mean; on each
-//! triangle the value is linear. A cell that is torn (the strength jumps at one of its sides) is not interpolated:
-//! each of its points fills a quarter, and no line is drawn, so that a jump is a step. A cell with a point that has
-//! no value stays blank.
+//! triangle the value is linear. A cell with a step at one of its sides (the strength jumps) is not interpolated: each
+//! of its points fills a quarter, and lines run at most between the quarters. A cell with a gap at one of its sides,
+//! or with a point that has no value, stays blank; a point between blank cells alone stands for itself.
 
 /// A point in units of the grid.
 pub(super) type Place = [f64; 2];
@@ -15,20 +15,31 @@ pub(super) struct Field {
     rows: usize,
     /// Row by row.
     values: Vec<Option<f64>>,
-    /// By cell, row by row.
-    torn: Vec<bool>,
+    /// By cell, row by row: the gravest of its sides.
+    seams: Vec<Seam>,
+}
+
+/// What lies between two neighbouring points.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord)]
+pub(super) enum Seam {
+    /// The value runs on.
+    Joined,
+    /// The value steps somewhere between.
+    Step,
+    /// Nothing is known of what lies between.
+    Gap,
 }
 
 /// A triangle with the values at its corners.
 type Triangle = [(Place, f64); 3];
 
 impl Field {
-    /// `value(column, row)`, and whether the side from a point to its neighbour in column or row is torn.
+    /// `value(column, row)`, and what lies between a point and its neighbour in column or row.
     pub(super) fn new(
         columns: usize,
         rows: usize,
         value: impl Fn(usize, usize) -> Option<f64>,
-        torn: impl Fn([usize; 2], [usize; 2]) -> bool,
+        seam: impl Fn([usize; 2], [usize; 2]) -> Seam,
     ) -> Self {
         let values = (0..rows).flat_map(|row| (0..columns).map(move |column| (column, row)));
         let values: Vec<Option<f64>> =
@@ -38,10 +49,10 @@ impl Field {
             for column in 1..columns {
                 let [a, b] = [[column - 1, row - 1], [column, row - 1]];
                 let [c, d] = [[column, row], [column - 1, row]];
-                cells.push(torn(a, b) || torn(b, c) || torn(d, c) || torn(a, d));
+                cells.push(seam(a, b).max(seam(b, c)).max(seam(d, c)).max(seam(a, d)));
             }
         }
-        Self { columns, rows, values, torn: cells }
+        Self { columns, rows, values, seams: cells }
     }
 
     /// Smallest and largest value.
@@ -58,9 +69,35 @@ impl Field {
         self.values[row * self.columns + column]
     }
 
+    fn seam(&self, column: usize, row: usize) -> Seam {
+        self.seams[row * (self.columns - 1) + column]
+    }
+
+    /// Whether a cell is filled.
+    fn is_filled(&self, column: usize, row: usize) -> bool {
+        let corners = corners(column, row);
+        self.seam(column, row) != Seam::Gap
+            && corners.iter().all(|(column, row)| self.value(*column, *row).is_some())
+    }
+
+    /// Points with a value that no filled cell touches.
+    pub(super) fn alone(&self) -> Vec<(Place, f64)> {
+        let mut touched = vec![false; self.values.len()];
+        for (column, row) in self.cells().filter(|(column, row)| self.is_filled(*column, *row)) {
+            for (column, row) in corners(column, row) {
+                touched[row * self.columns + column] = true;
+            }
+        }
+        let points = (0..self.rows).flat_map(|row| (0..self.columns).map(move |column| (column, row)));
+        points
+            .filter(|(column, row)| !touched[row * self.columns + column])
+            .filter_map(|(column, row)| Some((place(column, row), self.value(column, row)?)))
+            .collect()
+    }
+
     /// The corners of a cell, anticlockwise from its least; `None` when it is not interpolated.
     fn cell(&self, column: usize, row: usize) -> Option<[(Place, f64); 4]> {
-        if self.torn[row * (self.columns - 1) + column] {
+        if self.seam(column, row) != Seam::Joined {
             return None;
         }
         let corner = |column: usize, row: usize| Some((place(column, row), self.value(column, row)?));
@@ -106,17 +143,37 @@ impl Field {
         polygons
     }
 
-    /// The quarters of a torn cell.
+    /// The quarters of a cell with a step.
     fn quarters(&self, column: usize, row: usize, level: f64) -> Vec<Vec<Place>> {
-        let corners = [(column, row), (column + 1, row), (column + 1, row + 1), (column, row + 1)];
-        if corners.iter().any(|(column, row)| self.value(*column, *row).is_none()) {
+        if !self.is_filled(column, row) {
             return Vec::new();
         }
         let middle = place(column, row).map(|coordinate| coordinate + 0.5);
         let above =
             |(column, row): &(usize, usize)| self.value(*column, *row).is_some_and(|value| value >= level);
         let quarter = |(column, row): (usize, usize)| rectangle([place(column, row), middle]);
-        corners.into_iter().filter(above).map(quarter).collect()
+        corners(column, row).into_iter().filter(above).map(quarter).collect()
+    }
+
+    /// Borders between quarters on either side of a level.
+    pub(super) fn steps(&self, level: f64) -> Vec<[Place; 2]> {
+        let mut borders = Vec::new();
+        for (column, row) in self.cells().filter(|(column, row)| self.is_filled(*column, *row)) {
+            if self.seam(column, row) != Seam::Step {
+                continue;
+            }
+            let middle = place(column, row).map(|coordinate| coordinate + 0.5);
+            let corners = corners(column, row);
+            for (index, (column, row)) in corners.iter().enumerate() {
+                let (next_column, next_row) = corners[(index + 1) % 4];
+                let above = |column, row| self.value(column, row).is_some_and(|value| value >= level);
+                if above(*column, *row) != above(next_column, next_row) {
+                    let (one, next) = (place(*column, *row), place(next_column, next_row));
+                    borders.push([[0.5 * (one[0] + next[0]), 0.5 * (one[1] + next[1])], middle]);
+                }
+            }
+        }
+        borders
     }
 
     /// Pieces of the line at which the value is `level`.
@@ -127,6 +184,11 @@ impl Field {
             .filter_map(|triangle| crossing(&triangle, level))
             .collect()
     }
+}
+
+/// The points of a cell, anticlockwise from its least.
+fn corners(column: usize, row: usize) -> [(usize, usize); 4] {
+    [(column, row), (column + 1, row), (column + 1, row + 1), (column, row + 1)]
 }
 
 fn place(column: usize, row: usize) -> Place {
@@ -173,6 +235,7 @@ fn crossing(triangle: &Triangle, level: f64) -> Option<[Place; 2]> {
 }
 
 #[cfg(test)]
+#[allow(clippy::float_cmp)] // places and empty sums are exact
 mod tests {
     use super::*;
 
@@ -186,7 +249,7 @@ mod tests {
 
     fn plane(columns: usize, rows: usize) -> Field {
         let value = |column: usize, row: usize| Some(place(column, row)[0] + 2.0 * place(column, row)[1]);
-        Field::new(columns, rows, value, |_, _| false)
+        Field::new(columns, rows, value, |_, _| Seam::Joined)
     }
 
     #[test]
@@ -211,20 +274,37 @@ mod tests {
     #[test]
     fn a_jump_is_a_step_half_way_between_the_points() {
         let value = |column: usize, _: usize| Some(if column < 2 { 1.0 } else { 5.0 });
-        let torn = |[a, _]: [usize; 2], [b, _]: [usize; 2]| a == 1 && b == 2;
+        let torn =
+            |[a, _]: [usize; 2], [b, _]: [usize; 2]| if a == 1 && b == 2 { Seam::Step } else { Seam::Joined };
         let field = Field::new(4, 3, value, torn);
         for level in [1.5, 3.0, 4.9] {
             assert!((area(&field.above(level)) - 3.0).abs() < 1e-12);
             assert!(field.line(level).is_empty());
         }
+        // The border of the step runs half way over both rows, and only at levels between the two values.
+        let length = |level: f64| -> f64 {
+            field.steps(level).iter().map(|[a, b]| (a[0] - b[0]).hypot(a[1] - b[1])).sum()
+        };
+        assert!((length(3.0) - 2.0).abs() < 1e-12 && length(0.5) == 0.0 && length(6.0) == 0.0);
         // The same without the jump: the edge moves with the level.
-        let smooth = Field::new(4, 3, value, |_, _| false);
+        let smooth = Field::new(4, 3, value, |_, _| Seam::Joined);
         assert!((area(&smooth.above(2.0)) - 3.5).abs() < 1e-12);
     }
 
     #[test]
+    fn a_point_beside_gaps_stands_for_itself() {
+        let gap =
+            |[a, _]: [usize; 2], [b, _]: [usize; 2]| if a == 0 && b == 1 { Seam::Gap } else { Seam::Joined };
+        let field = Field::new(4, 3, |column, _| Some(if column == 0 { 9.0 } else { 1.0 }), gap);
+        assert!((area(&field.above(0.0)) - 4.0).abs() < 1e-12);
+        let alone: Vec<Place> = field.alone().into_iter().map(|(place, _)| place).collect();
+        assert_eq!(alone, [[0.0, 0.0], [0.0, 1.0], [0.0, 2.0]]);
+    }
+
+    #[test]
     fn cells_about_a_point_without_value_stay_blank() {
-        let field = Field::new(4, 3, |column, row| (column != 1 || row != 1).then_some(1.0), |_, _| false);
+        let field =
+            Field::new(4, 3, |column, row| (column != 1 || row != 1).then_some(1.0), |_, _| Seam::Joined);
         assert!((area(&field.above(0.0)) - 2.0).abs() < 1e-12);
     }
 }

@@ -1,7 +1,8 @@
 //! Two variables: maps of strength by both methods, their ratio, and the utilisation, with contours.
 //!
-//! A line of contour is where the value, linear between solved points, is the number at it. A step stands where the
-//! strength jumps; where a point has no answer the map is blank.
+//! A line of contour is where the value, linear between solved points, is the number at it. Where the strength jumps
+//! each point's value reaches half way to the next. Beside a point without an answer the map is blank, and that of the
+//! utilisation also where another case or analysis decides; a point between blank cells is a dot.
 
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text, outline};
 use super::super::count::as_float;
@@ -9,7 +10,7 @@ use super::super::font;
 use super::super::ink::{Ink, ramp};
 use super::super::sheet;
 use super::super::space::Space;
-use super::field::{Field, Place};
+use super::field::{Field, Place, Seam};
 use super::notes;
 use super::plot::{Plot, plain, range, ticks};
 use crate::output::number::{people, trimmed, utilisation};
@@ -30,6 +31,8 @@ const TOP: [f64; 2] = [128.0, 508.0];
 const SIZE: (f64, f64) = (430.0, 296.0);
 /// Most levels of a map.
 const LEVELS: usize = 9;
+/// Radius of a point that stands for itself, px.
+const ALONE: f64 = 3.2;
 /// Utilisation at which a joint ceases to hold.
 const LIMIT: f64 = 1.0;
 
@@ -37,8 +40,8 @@ const LIMIT: f64 = 1.0;
 struct Map<'s> {
     title: String,
     value: &'s dyn Fn(&Point) -> Option<f64>,
-    /// Whether it steps between two neighbouring points, by index.
-    steps: &'s dyn Fn([usize; 2]) -> bool,
+    /// What lies between two neighbouring points, by index.
+    seam: &'s dyn Fn([usize; 2]) -> Seam,
     /// Whether it is the utilisation, which has a limit and is rounded up.
     is_utilisation: bool,
 }
@@ -56,22 +59,26 @@ pub(super) fn drawn(sweep: &Sweep, across: &Variable, up: &Variable) -> Canvas {
     let ratio = |point: &Point| sweep.shown_case(point)?.ultimate_over_elastic();
     let utilisation = |point: &Point| point.outcome.as_ref().ok()?.utilisation();
     let jumps: BTreeMap<[usize; 2], &Jump> = sweep.jumps.iter().map(|jump| (jump.points, jump)).collect();
-    let jumps_at = |pair: [usize; 2]| jumps.contains_key(&pair);
-    let never = |_: [usize; 2]| false;
+    let jumps_at = |pair: [usize; 2]| if jumps.contains_key(&pair) { Seam::Step } else { Seam::Joined };
+    let joined = |_: [usize; 2]| Seam::Joined;
     let decided = |pair: [usize; 2]| {
-        // Jumps are searched for the shown case alone.
         let [one, next] = pair.map(|index| sweep.points.get(index).and_then(notes::deciding));
-        one != next || jumps.get(&pair).is_some_and(|jump| sweep.decides_at(jump))
+        // Where another case or analysis decides is not searched, and jumps are searched for the shown case alone.
+        match (one == next, jumps.get(&pair)) {
+            (false, _) => Seam::Gap,
+            (true, Some(jump)) if sweep.decides_at(jump) => Seam::Step,
+            (true, _) => Seam::Joined,
+        }
     };
     let strength = |name: &str| format!("nominal {name} strength, {unit}");
     let maps = [
-        Map { title: strength("ultimate"), value: &ultimate, steps: &jumps_at, is_utilisation: false },
-        Map { title: strength("elastic"), value: &elastic, steps: &never, is_utilisation: false },
-        Map { title: "ultimate / elastic".into(), value: &ratio, steps: &jumps_at, is_utilisation: false },
+        Map { title: strength("ultimate"), value: &ultimate, seam: &jumps_at, is_utilisation: false },
+        Map { title: strength("elastic"), value: &elastic, seam: &joined, is_utilisation: false },
+        Map { title: "ultimate / elastic".into(), value: &ratio, seam: &jumps_at, is_utilisation: false },
         Map {
             title: notes::utilisation(sweep).into(),
             value: &utilisation,
-            steps: &decided,
+            seam: &decided,
             is_utilisation: true,
         },
     ];
@@ -94,8 +101,8 @@ fn draw(canvas: &mut Canvas, sweep: &Sweep, [across, up]: [&Variable; 2], map: &
     // The first variable runs slowest.
     let index = |column: usize, row: usize| column * up.values.len() + row;
     let value = |column: usize, row: usize| sweep.points.get(index(column, row)).and_then(map.value);
-    let steps = |[a, b]: [usize; 2], [c, d]: [usize; 2]| (map.steps)([index(a, b), index(c, d)]);
-    let field = Field::new(across.values.len(), up.values.len(), value, steps);
+    let seam = |[a, b]: [usize; 2], [c, d]: [usize; 2]| (map.seam)([index(a, b), index(c, d)]);
+    let field = Field::new(across.values.len(), up.values.len(), value, seam);
     let spot = |place: Place| {
         let at = |variable: &Variable, share: f64| {
             let last = as_float(variable.values.len() - 1);
@@ -124,6 +131,11 @@ fn draw(canvas: &mut Canvas, sweep: &Sweep, [across, up]: [&Variable; 2], map: &
     fill(f64::NEG_INFINITY, shade(0.0));
     for (band, level) in (1..).zip(&levels) {
         fill(*level, shade(as_float(band) / bands));
+    }
+    for (place, value) in field.alone() {
+        let below = levels.iter().filter(|level| **level <= value).count();
+        let outline = Stroke::solid(Ink::TEXT, 1.0);
+        canvas.circle(spot(place), ALONE, Some(shade(as_float(below) / bands)), Some(outline));
     }
     let mut space = Space::new(plot.area.grown(-4.0));
     let limit = map.is_utilisation.then_some(LIMIT);
@@ -155,6 +167,7 @@ fn shade(share: f64) -> Ink {
     ramp(0.72 * share)
 }
 
+#[allow(clippy::float_cmp)] // a level that is the limit is exactly it
 fn contours(
     canvas: &mut Canvas,
     space: &mut Space,
@@ -163,14 +176,17 @@ fn contours(
     limit: Option<f64>,
     spot: &dyn Fn(Place) -> Spot,
 ) {
-    #[allow(clippy::float_cmp)] // a tick that is the limit is exactly it
     let is_usual = |(level, _): &(&f64, String)| limit != Some(**level);
     let usual = levels.iter().zip(plain(levels)).filter(is_usual);
     let usual = usual.map(|(level, words)| (*level, words, Stroke::solid(Ink::TEXT, 1.0)));
     let strong = limit.map(|limit| (limit, trimmed(limit), Stroke::solid(Ink::EXCEEDED, 2.6)));
     let mut lines: Vec<(String, Ink, Vec<[Spot; 2]>)> = Vec::new();
     for (level, words, stroke) in usual.chain(strong) {
-        let pieces: Vec<[Spot; 2]> = field.line(level).into_iter().map(|piece| piece.map(spot)).collect();
+        let mut pieces: Vec<[Spot; 2]> = field.line(level).into_iter().map(|piece| piece.map(spot)).collect();
+        if limit == Some(level) {
+            // The limit also runs along steps.
+            pieces.extend(field.steps(level).into_iter().map(|piece| piece.map(spot)));
+        }
         let data: Vec<String> = pieces.iter().map(|piece| outline(piece, false)).collect();
         if !data.is_empty() {
             canvas.path(&data.concat(), None, Some(stroke));

@@ -91,7 +91,7 @@ fn sentences(sweep: &Sweep) -> Vec<String> {
         count(
             Status::NotSolved,
             if sweep.variables.len() > 1 {
-                "without an answer (grey)"
+                "without an answer"
             } else {
                 "without an answer (a cross on the axis)"
             },
@@ -102,6 +102,15 @@ fn sentences(sweep: &Sweep) -> Vec<String> {
         words::basis_in_brief(&sweep.joint),
         format!("{} points: {}.", sweep.points.len(), counts.join(", ")),
     ];
+    if sweep.variables.len() > 1
+        && (sweep.count(Status::NotSolved) > 0 || sweep.decided_by(Basis::Concentric) > 0)
+    {
+        sentences
+            .push("Grey: beside points without an answer, or where another analysis decides.".to_owned());
+    }
+    if sweep.points.iter().all(|point| sweep.shown_case(point).is_none_or(|case| case.demand.is_none())) {
+        sentences.push("The case shown has no load: there is no strength to draw.".to_owned());
+    }
     let other = sweep.in_other_measure();
     if other > 0 {
         let noun = if sweep.in_moment() { "force" } else { "moment alone" };

@@ -84,7 +84,7 @@ impl Dimensions {
     ) {
         for rows in [&self.across, &self.up] {
             for (index, places) in rows.rows.iter().enumerate() {
-                let offset = 12.0 + ROW * super::super::count::as_float(index);
+                let offset = 17.0 + ROW * super::super::count::as_float(index);
                 row(canvas, space, subject, view, rows, places, group, offset);
             }
         }

@@ -17,7 +17,7 @@ use crate::output::number::{length, point, quantity, trimmed};
 use crate::units::Dimension;
 
 /// Radius of the arrow of a moment, px.
-const TURN: f64 = 22.0;
+pub(super) const TURN: f64 = 22.0;
 
 /// Shortest perpendicular that is drawn, px.
 const SHORTEST_ARM: f64 = 14.0;

@@ -112,7 +112,9 @@ pub(super) fn label(
         }
     };
     let said = point_off(canvas, space, view.spot(subject.centroid()), on_page(toward), &words);
-    (!said).then(|| format!("{}.", words.replacen('c', "C", usize::from(words.starts_with('c')))))
+    let mut letters = words.chars();
+    let capital = letters.next().map(|first| first.to_ascii_uppercase());
+    (!said).then(|| format!("{}{}.", capital.map(String::from).unwrap_or_default(), letters.as_str()))
 }
 
 /// An arrow away from the group, toward what lies off the drawing, with a text; whether the text found room.

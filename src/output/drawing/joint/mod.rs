@@ -110,6 +110,15 @@ fn laid_out(subject: &Subject<'_>, frame: &Area) -> (View, Forces, Dimensions, A
         let mark = Area::around(view.spot(centre), Spot::new(2.0 * MARK, 2.0 * MARK));
         group = Area { least: group.least.inf(&mark.least), most: group.most.sup(&mark.most) };
     }
+    // So do they off the arrows of moments at the welds.
+    let turn = loads::TURN + 4.0;
+    for load in subject.loads().iter().filter(|load| load.wrench.moment.z.abs() > 0.0) {
+        let at = if subject.is_in_place(load) { load.wrench.reference } else { subject.centroid() };
+        let arrow = Area::around(view.spot(at), Spot::new(2.0 * turn, 2.0 * turn));
+        if arrow.overlaps(&bands) {
+            group = Area { least: group.least.inf(&arrow.least), most: group.most.sup(&arrow.most) };
+        }
+    }
     (view, forces, dimensions, group)
 }
 
@@ -141,9 +150,6 @@ fn remarks(subject: &Subject<'_>, view: &View, missed: usize) -> Vec<String> {
     if let Some(ultimate) = subject.case.ultimate() {
         remarks.extend(about_states(ultimate));
     }
-    if subject.case.elastic().is_none() {
-        remarks.push("The load is zero: nothing to resist.".to_owned());
-    }
     if bands::widened(joint, view) {
         remarks.push("Welds are drawn wider than to scale.".to_owned());
     }
@@ -161,7 +167,7 @@ fn remarks(subject: &Subject<'_>, view: &View, missed: usize) -> Vec<String> {
     if subject.draws_each_load() && far.count() > 0 {
         let distance = length(joint.units, subject.size());
         remarks.push(format!(
-            "A load far from the group ({distance} across) is drawn at the rim; a moment there about the centroid."
+            "A force far from the group ({distance} across) is drawn at the rim, a moment at the centroid."
         ));
     }
     remarks

@@ -64,7 +64,7 @@ fn list(column: &mut Column<'_>, heading: &str, sentences: &[String]) {
         let last = index + 1 == sentences.len();
         // A line stays free for what is left over.
         if !column.sentence_above(sentence, Ink::TEXT, if last { 0.0 } else { font::LEADING * SMALL }) {
-            column.sentence(&format!("and {} more: see the text", sentences.len() - index), Ink::QUIET);
+            column.sentence(&format!("and {} more", sentences.len() - index), Ink::QUIET);
             break;
         }
     }
@@ -95,6 +95,7 @@ fn verdict(column: &mut Column<'_>, subject: &Subject<'_>) {
         Status::NotSolved => Ink::TEXT,
     };
     column.sentence(&words::decision(subject.case), ink);
+    column.sentence(&words::basis_in_brief(subject.joint()), Ink::QUIET);
 }
 
 /// The two methods side by side.
@@ -149,10 +150,10 @@ fn sizes(column: &mut Column<'_>, subject: &Subject<'_>) {
         }
     }
     let line = font::LEADING * SMALL + 3.0;
-    // The heading, the sizes or as many as there is room for and a word on the rest, and the rules.
+    // The heading, the sizes or as many as there is room for and a word on the rest.
     let lines_left = (column.bottom - column.y - HEADING) / line;
     let mut shown = kinds.len();
-    let needed = |shown: usize| as_float(shown) + if shown < kinds.len() { 2.0 } else { 1.0 };
+    let needed = |shown: usize| as_float(shown) + if shown < kinds.len() { 1.0 } else { 0.0 };
     while shown > 0 && needed(shown) > lines_left {
         shown -= 1;
     }
@@ -162,11 +163,10 @@ fn sizes(column: &mut Column<'_>, subject: &Subject<'_>) {
     column.heading("Welds");
     for (size, count, total) in &kinds[..shown] {
         let noun = if *count == 1 { "weld" } else { "welds" };
-        column.line(&format!("{count} {noun}, {size}: {} long", length(joint.units, *total)), Ink::TEXT);
+        column.line(&format!("{count} {noun}, {}: {size}", length(joint.units, *total)), Ink::TEXT);
     }
     if kinds.len() > shown {
         let rest = kinds.len() - shown;
         column.line(&format!("and {rest} more {}", if rest == 1 { "size" } else { "sizes" }), Ink::QUIET);
     }
-    column.sentence(&words::basis_in_brief(joint), Ink::QUIET);
 }
