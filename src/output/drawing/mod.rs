@@ -7,7 +7,8 @@
 //! | `ink.rs` | colours |
 //! | `space.rs` | where on the page there is room for a text |
 //! | `view.rs` | from the joint's plane to the page |
-//! | `arrow.rs`, `sheet.rs`, `count.rs` | arrows; what all pages have in common; counts as numbers |
+//! | `sheet.rs`, `column.rs` | what all pages have in common; the panel beside a drawing |
+//! | `arrow.rs`, `count.rs` | arrows; counts as numbers |
 //! | `joint/` | a joint under a case |
 //! | `chart/` | a sweep: curves and maps |
 //! | `png.rs` | SVG to PNG (feature `png`) |
@@ -17,6 +18,7 @@
 mod arrow;
 mod canvas;
 mod chart;
+mod column;
 mod count;
 mod font;
 mod ink;

@@ -3,8 +3,9 @@
 //! Boxes (texts, symbols) are never overlapped; lines (welds, arrows) are crossed only when nothing else is free.
 //! A text that finds no place is not put at all: the caller lists it beside the drawing.
 
-use super::canvas::{Anchor, Area, Canvas, Spot, Text};
+use super::canvas::{Anchor, Area, Canvas, Spot, Stroke, Text};
 use super::font;
+use super::ink::Ink;
 
 /// Least distance of two texts.
 const APART: f64 = 3.0;
@@ -27,13 +28,13 @@ pub(super) struct Space {
 
 /// Where a text was placed.
 #[derive(Debug, Clone, Copy, PartialEq)]
-pub(super) struct Placed {
+struct Placed {
     /// The box of the text.
-    pub(super) area: Area,
+    area: Area,
     /// What it belongs to.
-    pub(super) wish: Spot,
+    wish: Spot,
     /// Whether it is so far from its wished place that a line should lead to it.
-    pub(super) led: bool,
+    led: bool,
 }
 
 impl Space {
@@ -110,13 +111,25 @@ impl Space {
         best
     }
 
-    /// Places a text near its wish and puts it on the canvas; `None` when there is no room.
-    pub(super) fn label(&mut self, canvas: &mut Canvas, label: &Label<'_>) -> Option<Placed> {
-        self.label_one_of(canvas, std::slice::from_ref(label))
+    /// Places a text near its wish and puts it on the canvas; whether there was room.
+    pub(super) fn label(&mut self, canvas: &mut Canvas, label: &Label<'_>) -> bool {
+        self.put(canvas, std::slice::from_ref(label)).is_some()
+    }
+
+    /// Places one text at the best of several wishes, with a line that leads to it where it is far; whether there was
+    /// room.
+    pub(super) fn lead_label(&mut self, canvas: &mut Canvas, labels: &[Label<'_>]) -> bool {
+        let Some(Placed { area, wish, led }) = self.put(canvas, labels) else { return false };
+        if led {
+            let from =
+                Spot::new(wish.x.clamp(area.least.x, area.most.x), wish.y.clamp(area.least.y, area.most.y));
+            canvas.line(from, wish, Stroke::solid(Ink::QUIET, 0.8));
+        }
+        true
     }
 
     /// Places one text at the best of several wishes; the first of equals.
-    pub(super) fn label_one_of(&mut self, canvas: &mut Canvas, labels: &[Label<'_>]) -> Option<Placed> {
+    fn put(&mut self, canvas: &mut Canvas, labels: &[Label<'_>]) -> Option<Placed> {
         let mut best: Option<(f64, Placed, &Label<'_>)> = None;
         for label in labels {
             let level = Text { at: Spot::zeros(), anchor: Anchor::Start, ..label.text.clone() };

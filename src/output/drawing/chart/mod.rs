@@ -10,7 +10,7 @@
 //! | what the drawing says in words | `notes.rs` |
 //!
 //! Every point drawn is a point solved. Between points curves are straight and maps linear, except where the
-//! strength jumps: there nothing is drawn between.
+//! strength jumps: there curves are broken, and on maps each point's value reaches half way.
 
 mod curves;
 mod field;

@@ -1,7 +1,7 @@
 //! What the drawing of a sweep says in words.
 
-use super::super::canvas::{Area, BODY, Canvas, SMALL, Spot, Stroke, Text};
-use super::super::count::as_float;
+use super::super::canvas::{Area, Canvas, SMALL, Spot, Stroke};
+use super::super::column::Column;
 use super::super::font;
 use super::super::ink::Ink;
 use super::plot::Mark;
@@ -13,6 +13,8 @@ use crate::output::words;
 use crate::study::sweep::{Point, PointCase, Sweep, Target, Variable};
 use crate::units::Dimension;
 
+/// Room after a sentence, px.
+const GAP_OF_SENTENCES: f64 = 6.0;
 /// Share by which the peak must exceed the ultimate strength to have a curve of its own in words.
 const NOTABLE_PEAK: f64 = 1e-3;
 
@@ -124,9 +126,8 @@ fn sentences(sweep: &Sweep) -> Vec<String> {
 
 /// The panel beside curves.
 pub(super) fn draw(canvas: &mut Canvas, panel: &Area, sweep: &Sweep) {
-    canvas.area(panel, Some(Ink::WASH), None);
-    let (left, right) = (panel.least.x + 16.0, panel.most.x - 16.0);
-    let mut y = heading(canvas, "Key", left, right, panel.least.y + 2.0);
+    let mut column = Column::new(canvas, panel, GAP_OF_SENTENCES);
+    column.heading("Key");
     let line = |ink: Ink, width: f64, mark: Option<Mark>| {
         move |canvas: &mut Canvas, at: Spot| {
             canvas.line(at - Spot::new(22.0, 0.0), at + Spot::new(22.0, 0.0), Stroke::solid(ink, width));
@@ -135,55 +136,23 @@ pub(super) fn draw(canvas: &mut Canvas, panel: &Area, sweep: &Sweep) {
             }
         }
     };
-    let mut key = |words: &str, symbol: &dyn Fn(&mut Canvas, Spot)| {
-        symbol(canvas, Spot::new(left + 24.0, y + 11.0));
-        let at = Spot::new(left + 58.0, y + 11.0 + 0.5 * font::CAPITALS * SMALL);
-        canvas.text(&Text { size: SMALL, ..Text::new(words, at) });
-        y += 22.0;
-    };
-    key("ultimate, first rupture", &line(Ink::ULTIMATE, 2.4, Some(Mark::Dot)));
-    key("elastic vector method", &line(Ink::ELASTIC, 2.4, Some(Mark::Square)));
+    column.key("ultimate, first rupture", None, line(Ink::ULTIMATE, 2.4, Some(Mark::Dot)));
+    column.key("elastic vector method", None, line(Ink::ELASTIC, 2.4, Some(Mark::Square)));
     if peak_differs(sweep) {
-        key("peak on the path from zero load", &line(Ink::PEAK, 1.6, None));
+        column.key("peak on the path from zero load", None, line(Ink::PEAK, 1.6, None));
     }
     if !sweep.jumps.is_empty() {
-        key("both sides of a jump", &|canvas, at| {
+        column.key("both sides of a jump", None, |canvas, at| {
             Mark::Ring.draw(canvas, at - Spot::new(9.0, 4.0), Ink::ULTIMATE);
             Mark::Ring.draw(canvas, at + Spot::new(9.0, 4.0), Ink::ULTIMATE);
         });
     }
-    key("utilisation, satisfied", &|canvas, at| Mark::Dot.draw(canvas, at, Ink::TEXT));
+    column.key("utilisation, satisfied", None, |canvas, at| Mark::Dot.draw(canvas, at, Ink::TEXT));
     if sweep.count(Status::Exceeded) > 0 {
-        key("utilisation, exceeded", &|canvas, at| Mark::Ring.draw(canvas, at, Ink::EXCEEDED));
+        column.key("utilisation, exceeded", None, |canvas, at| Mark::Ring.draw(canvas, at, Ink::EXCEEDED));
     }
-    y = heading(canvas, "What it shows", left, right, y);
-    let sentences = sentences(sweep);
-    for (index, sentence) in sentences.iter().enumerate() {
-        let lines = font::lines(sentence, SMALL, right - left);
-        let left_over = sentences.len() - index;
-        let free = if left_over == 1 { 0.0 } else { font::LEADING * SMALL };
-        if y + font::LEADING * SMALL * as_float(lines.len()) + free > panel.most.y - 8.0 {
-            let words = format!("and {left_over} more: see the text");
-            canvas.text(&Text {
-                size: SMALL,
-                ink: Ink::QUIET,
-                ..Text::new(&words, Spot::new(left, y + SMALL))
-            });
-            break;
-        }
-        y = canvas.lines(&lines, Spot::new(left, y + SMALL), SMALL, Ink::TEXT) - SMALL + 6.0;
-    }
-}
-
-fn heading(canvas: &mut Canvas, words: &str, left: f64, right: f64, y: f64) -> f64 {
-    let y = y + 10.0;
-    canvas.text(&Text::new(words, Spot::new(left, y + BODY)));
-    canvas.line(
-        Spot::new(left, y + BODY + 7.0),
-        Spot::new(right, y + BODY + 7.0),
-        Stroke::solid(Ink::HAIR, 1.0),
-    );
-    y + BODY + 13.0
+    column.heading("What it shows");
+    column.sentences(&sentences(sweep), ": see the text");
 }
 
 /// The lines below maps.

@@ -17,6 +17,8 @@ const PROOF: &str = "the page takes every line, and the part of it that a plot h
 
 /// Distance of the numbers below the frame: clear of the lowest number beside it, px.
 const BELOW: f64 = 9.0;
+/// Length of a tick outside the frame, px.
+const TICK: f64 = 4.0;
 /// The unit whose round numbers are parts of a turn.
 const DEGREES: &str = "deg";
 /// Its round steps.
@@ -122,21 +124,8 @@ impl Plot {
 
     /// Draws the grid, the numbers and the titles; the numbers of the x axis only with a title below.
     pub(super) fn axes(&self, canvas: &mut Canvas, x_title: Option<&str>, y_title: &str) {
-        let grid = Stroke::solid(Ink::HAIR, 0.8);
-        let found = self.x_ticks();
-        for (value, words) in found.iter().zip(plain(&found)) {
-            let at = self.spot(*value, self.y[0]);
-            canvas.line(at, Spot::new(at.x, self.area.least.y), grid);
-            if x_title.is_some() {
-                number(canvas, &words, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
-            }
-        }
-        let found = self.y_ticks();
-        for (value, words) in found.iter().zip(plain(&found)) {
-            let at = self.spot(self.x[0], *value);
-            canvas.line(at, Spot::new(self.area.most.x, at.y), grid);
-            number(canvas, &words, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
-        }
+        let size = self.area.size();
+        self.numbers(canvas, x_title.is_some(), Stroke::solid(Ink::HAIR, 0.8), [size.x, -size.y]);
         self.frame(canvas);
         self.titles(canvas, x_title, y_title);
     }
@@ -145,19 +134,7 @@ impl Plot {
     /// axis stands upright beside it.
     pub(super) fn axes_over(&self, canvas: &mut Canvas, titles: &[String; 3]) {
         let [x_title, y_title, title] = titles;
-        let tick = Stroke::solid(Ink::QUIET, 1.0);
-        let found = self.x_ticks();
-        for (value, words) in found.iter().zip(plain(&found)) {
-            let at = self.spot(*value, self.y[0]);
-            canvas.line(at, at + Spot::new(0.0, 4.0), tick);
-            number(canvas, &words, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
-        }
-        let found = self.y_ticks();
-        for (value, words) in found.iter().zip(plain(&found)) {
-            let at = self.spot(self.x[0], *value);
-            canvas.line(at, at - Spot::new(4.0, 0.0), tick);
-            number(canvas, &words, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
-        }
+        self.numbers(canvas, true, Stroke::solid(Ink::QUIET, 1.0), [-TICK, TICK]);
         self.frame(canvas);
         self.titles(canvas, Some(x_title), title);
         let y_title = font::clipped(y_title, SMALL, self.area.size().y);
@@ -165,8 +142,26 @@ impl Plot {
         canvas.text(&Text { size: SMALL, anchor: Anchor::Middle, upward: true, ..Text::new(&y_title, at) });
     }
 
+    /// Draws a line at every tick, as far along the page's x and y as `reach` says, and the numbers.
+    fn numbers(&self, canvas: &mut Canvas, with_x: bool, stroke: Stroke, reach: [f64; 2]) {
+        let found = self.x_ticks();
+        for (value, words) in found.iter().zip(plain(&found)) {
+            let at = self.spot(*value, self.y[0]);
+            canvas.line(at, at + Spot::new(0.0, reach[1]), stroke);
+            if with_x {
+                number(canvas, &words, at + Spot::new(0.0, BELOW + font::ASCENT * SMALL), Anchor::Middle);
+            }
+        }
+        let found = self.y_ticks();
+        for (value, words) in found.iter().zip(plain(&found)) {
+            let at = self.spot(self.x[0], *value);
+            canvas.line(at, at + Spot::new(reach[0], 0.0), stroke);
+            number(canvas, &words, at + Spot::new(-8.0, 0.5 * font::CAPITALS * SMALL), Anchor::End);
+        }
+    }
+
     /// Draws the outline.
-    pub(super) fn frame(&self, canvas: &mut Canvas) {
+    fn frame(&self, canvas: &mut Canvas) {
         canvas.area(&self.area, None, Some(Stroke::solid(Ink::QUIET, 1.0)));
     }
 

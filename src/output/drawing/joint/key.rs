@@ -2,10 +2,11 @@
 
 use super::super::arrow::Arrow;
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Stroke, Text};
+use super::super::column::Column;
 use super::super::count::as_float;
 use super::super::ink::{Ink, ramp};
 use super::bands;
-use super::column::Column;
+
 use super::forces::{ELASTIC, Forces, ULTIMATE};
 use super::marks;
 use super::subject::Subject;

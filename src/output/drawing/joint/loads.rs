@@ -65,7 +65,7 @@ pub(super) fn draw(
     }
     let mut moments: Vec<(Vector, Vec<&AppliedLoad>)> = Vec::new();
     for load in loads.iter().filter(|load| load.wrench.moment.z.abs() > 0.0) {
-        let at = if subject.is_in_place(load) { load.wrench.reference } else { subject.centroid() };
+        let at = subject.place_of_moment(load);
         match moments.iter_mut().find(|(known, _)| subject.is_same(*known, at)) {
             Some((_, there)) => there.push(load),
             None => moments.push((at, vec![load])),
@@ -145,10 +145,7 @@ fn moment(
 ) -> Vec<String> {
     let units = subject.joint().units;
     let sum: f64 = loads.iter().map(|load| load.wrench.moment.z).sum();
-    if sum.abs() > 0.0 {
-        LOAD.turn(canvas, at, TURN, sum > 0.0);
-    }
-    space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
+    turn(canvas, space, at, sum);
     let value = quantity(units, Dimension::Moment, sum);
     let (name, value) = match loads {
         [load] => (name(load), value),
@@ -160,6 +157,14 @@ fn moment(
     } else {
         loads.iter().map(|load| in_words(subject, load)).collect()
     }
+}
+
+/// The arrow of a moment, and its place.
+fn turn(canvas: &mut Canvas, space: &mut Space, at: Spot, moment: f64) {
+    if moment.abs() > 0.0 {
+        LOAD.turn(canvas, at, TURN, moment > 0.0);
+    }
+    space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
 }
 
 /// The sum of all loads, where they are too many to be drawn.
@@ -179,8 +184,7 @@ fn resultant(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view
         say(canvas, space, "", &words, tail + unit * (0.5 * LENGTHS.0), 6.0, beside(unit));
     } else if load.moment.z.abs() > 0.0 {
         let at = view.spot(subject.centroid());
-        LOAD.turn(canvas, at, TURN, load.moment.z > 0.0);
-        space.take(Area::around(at, Spot::new(2.0 * TURN, 2.0 * TURN)));
+        turn(canvas, space, at, load.moment.z);
         let size = quantity(units, Dimension::Moment, load.moment.z);
         say(canvas, space, "", &size, at, TURN, Spot::new(1.0, -1.0));
     }
@@ -225,10 +229,7 @@ fn line_of_action(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>,
     let text = Text { size: SMALL, ink: Ink::QUIET, ..Text::new(&words, Spot::zeros()) };
     let up = if along.y > 0.0 { -along } else { along };
     let wish = centroid + (at - centroid) * ALONG_THE_ARM;
-    let placed = space.label(canvas, &Label { text, wish, reach: 1.0, direction: up });
-    if let Some(placed) = placed.filter(|placed| placed.led) {
-        super::marks::lead(canvas, wish, &placed.area);
-    }
+    space.lead_label(canvas, &[Label { text, wish, reach: 1.0, direction: up }]);
 }
 
 /// Across an arrow, to the right or above.
@@ -250,9 +251,5 @@ fn say(
     let name = font::clipped(name, SMALL, room.max(SHORTEST_NAME));
     let words = if name.is_empty() { value.to_owned() } else { format!("{name}: {value}") };
     let text = Text { size: SMALL, ink: Ink::LOAD, ..Text::new(&words, Spot::zeros()) };
-    let placed = space.label(canvas, &Label { text, wish, reach, direction });
-    if let Some(placed) = placed.filter(|placed| placed.led) {
-        super::marks::lead(canvas, wish, &placed.area);
-    }
-    placed.is_some()
+    space.lead_label(canvas, &[Label { text, wish, reach, direction }])
 }

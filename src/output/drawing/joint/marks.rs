@@ -52,12 +52,6 @@ pub(super) fn worst(canvas: &mut Canvas, at: Spot) {
     canvas.area(&area, None, Some(Stroke::solid(Ink::ELASTIC, 2.4)));
 }
 
-/// A thin line from a text to what it belongs to.
-pub(super) fn lead(canvas: &mut Canvas, to: Spot, text: &Area) {
-    let from = Spot::new(to.x.clamp(text.least.x, text.most.x), to.y.clamp(text.least.y, text.most.y));
-    canvas.line(from, to, Stroke::solid(Ink::QUIET, 0.8));
-}
-
 /// Draws all marks and takes their place.
 pub(super) fn draw(canvas: &mut Canvas, space: &mut Space, subject: &Subject<'_>, view: &View) {
     let mut take = |at: Spot| space.take(Area::around(at, Spot::new(2.4 * RADIUS, 2.4 * RADIUS)));
@@ -93,11 +87,7 @@ pub(super) fn label(
         let text = Text { size: SMALL, ink: Ink::ULTIMATE, ..Text::new("centre of rotation", Spot::zeros()) };
         let away = on_page(near - subject.centroid());
         let label = Label { text, wish: view.spot(near), reach: RADIUS + 3.0, direction: away };
-        if let Some(placed) = space.label(canvas, &label)
-            && placed.led
-        {
-            lead(canvas, view.spot(near), &placed.area);
-        }
+        space.lead_label(canvas, &[label]);
         return None;
     }
     let (words, toward) = match subject.centre() {
@@ -140,5 +130,5 @@ fn point_off(canvas: &mut Canvas, space: &mut Space, from: Spot, toward: Spot, w
     look.open(canvas, tail, tip);
     space.take(room);
     let label = Label { text, wish: (tail + tip) / 2.0, reach: 10.0, direction: Spot::new(-unit.y, unit.x) };
-    space.label(canvas, &label).is_some()
+    space.label(canvas, &label)
 }

@@ -9,12 +9,11 @@
 //! | loads, line of action, eccentricity | `loads.rs` |
 //! | centroid, centre of rotation, critical points | `marks.rs` |
 //! | measures | `dimensions.rs` |
-//! | numbers, verdict, remarks; key | `panel.rs`, `key.rs`, `column.rs` |
+//! | numbers, verdict, remarks; key | `panel.rs`, `key.rs` |
 //!
 //! The drawing is made twice: first to learn how far the arrows reach on the page, then with room for them.
 
 mod bands;
-mod column;
 mod dimensions;
 mod forces;
 mod key;
@@ -113,8 +112,7 @@ fn laid_out(subject: &Subject<'_>, frame: &Area) -> (View, Forces, Dimensions, A
     // So do they off the arrows of moments at the welds.
     let turn = loads::TURN + 4.0;
     for load in subject.loads().iter().filter(|load| load.wrench.moment.z.abs() > 0.0) {
-        let at = if subject.is_in_place(load) { load.wrench.reference } else { subject.centroid() };
-        let arrow = Area::around(view.spot(at), Spot::new(2.0 * turn, 2.0 * turn));
+        let arrow = Area::around(view.spot(subject.place_of_moment(load)), Spot::new(2.0 * turn, 2.0 * turn));
         if arrow.overlaps(&bands) {
             group = Area { least: group.least.inf(&arrow.least), most: group.most.sup(&arrow.most) };
         }
@@ -162,8 +160,8 @@ fn remarks(subject: &Subject<'_>, view: &View, missed: usize) -> Vec<String> {
     if subject.report.deciding_case().is_some_and(|case| !std::ptr::eq(case, subject.case)) {
         remarks.push("Another case decides the joint; the verdict above is the joint's.".to_owned());
     }
-    let has_place = |load: &&AppliedLoad| load.placed || load.wrench.force.norm() > 0.0;
-    let far = subject.loads().iter().filter(has_place).filter(|load| !subject.is_near(load.wrench.reference));
+    let is_far = |load: &&AppliedLoad| Subject::has_place(load) && !subject.is_in_place(load);
+    let far = subject.loads().iter().filter(is_far);
     if subject.draws_each_load() && far.count() > 0 {
         let distance = length(joint.units, subject.size());
         remarks.push(format!(

@@ -1,10 +1,10 @@
 //! The panel beside the drawing: both methods in numbers, the verdict on the case, key, remarks, sizes of welds.
 
 use super::super::canvas::{Anchor, Area, Canvas, SMALL, Spot, Text};
+use super::super::column::{Column, HEADING};
 use super::super::count::as_float;
 use super::super::font;
 use super::super::ink::Ink;
-use super::column::{Column, HEADING};
 use super::forces::Forces;
 use super::key;
 use super::subject::Subject;
@@ -17,8 +17,8 @@ use crate::units::Dimension;
 
 /// Distance of the rows of the table, px.
 const TABLE_ROW: f64 = 20.0;
-/// Margin within the panel, px.
-const MARGIN: f64 = 16.0;
+/// Room after a sentence, px.
+const GAP_OF_SENTENCES: f64 = 3.0;
 /// Least distance of columns of the table, px.
 const GAP: f64 = 8.0;
 
@@ -33,14 +33,7 @@ pub(super) struct Notes {
 
 /// Draws the panel.
 pub(super) fn draw(canvas: &mut Canvas, panel: &Area, subject: &Subject<'_>, forces: &Forces, notes: &Notes) {
-    canvas.area(panel, Some(Ink::WASH), None);
-    let mut column = Column {
-        canvas,
-        left: panel.least.x + MARGIN,
-        right: panel.most.x - MARGIN,
-        y: panel.least.y + 2.0,
-        bottom: panel.most.y - 6.0,
-    };
+    let mut column = Column::new(canvas, panel, GAP_OF_SENTENCES);
     column.heading(&format!("Case {}", subject.case.name));
     load(&mut column, subject);
     methods(&mut column, subject);
@@ -60,14 +53,7 @@ fn list(column: &mut Column<'_>, heading: &str, sentences: &[String]) {
         return;
     }
     column.heading(heading);
-    for (index, sentence) in sentences.iter().enumerate() {
-        let last = index + 1 == sentences.len();
-        // A line stays free for what is left over.
-        if !column.sentence_above(sentence, Ink::TEXT, if last { 0.0 } else { font::LEADING * SMALL }) {
-            column.sentence(&format!("and {} more", sentences.len() - index), Ink::QUIET);
-            break;
-        }
-    }
+    column.sentences(sentences, "");
 }
 
 /// The load about the centroid.
@@ -149,7 +135,7 @@ fn sizes(column: &mut Column<'_>, subject: &Subject<'_>) {
             None => kinds.push((size, 1, weld.length())),
         }
     }
-    let line = font::LEADING * SMALL + 3.0;
+    let line = font::LEADING * SMALL + GAP_OF_SENTENCES;
     // The heading, the sizes or as many as there is room for and a word on the rest.
     let lines_left = (column.bottom - column.y - HEADING) / line;
     let mut shown = kinds.len();

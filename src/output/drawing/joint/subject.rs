@@ -94,10 +94,19 @@ impl<'r> Subject<'r> {
         self.case.load_times(1.0).is_some_and(|(_, in_moment)| !in_moment)
     }
 
+    /// Whether a load has a place of its own: a moment alone may have none.
+    pub(super) fn has_place(load: &AppliedLoad) -> bool {
+        load.placed || load.wrench.force.norm() > 0.0
+    }
+
     /// Whether a load has a place of its own that is near enough to be drawn there.
     pub(super) fn is_in_place(&self, load: &AppliedLoad) -> bool {
-        let placed = load.placed || load.wrench.force.norm() > 0.0;
-        placed && self.is_near(load.wrench.reference)
+        Self::has_place(load) && self.is_near(load.wrench.reference)
+    }
+
+    /// Where the moment of a load is drawn.
+    pub(super) fn place_of_moment(&self, load: &AppliedLoad) -> Vector {
+        if self.is_in_place(load) { load.wrench.reference } else { self.centroid() }
     }
 
     /// Places of loads that are drawn there, each once; the foot of the resultant where the loads are too many.

@@ -4,7 +4,6 @@ use super::super::canvas::{Canvas, SMALL, Spot, Text};
 use super::super::space::{Label, Space};
 use super::super::view::{View, on_page};
 use super::bands;
-use super::marks;
 use super::subject::Subject;
 use crate::model::{Joint, Run, Vector, Weld};
 use crate::output::number::{degrees, leg, length};
@@ -87,11 +86,7 @@ fn put(
             });
         }
     }
-    let placed = space.label_one_of(canvas, &labels);
-    if let Some(placed) = placed.filter(|placed| placed.led) {
-        marks::lead(canvas, placed.wish, &placed.area);
-    }
-    placed.is_some()
+    space.lead_label(canvas, &labels)
 }
 
 /// Across the weld, away from the centroid.

@@ -1,14 +1,17 @@
-//! A column of headings, sentences and symbols, written from top to bottom.
+//! The panel beside a drawing: a column of headings, sentences and symbols, written from top to bottom.
 
-use super::super::canvas::{BODY, Canvas, SMALL, Spot, Stroke, Text};
-use super::super::count::as_float;
-use super::super::font;
-use super::super::ink::Ink;
+use super::canvas::{Area, BODY, Canvas, SMALL, Spot, Stroke, Text};
+use super::count::as_float;
+use super::font;
+use super::ink::Ink;
 
 /// Distance of rows, px.
 pub(super) const ROW: f64 = 22.0;
 /// Height of a heading of one line, px.
 pub(super) const HEADING: f64 = BODY + 22.0;
+
+/// Margin within the panel, px.
+const MARGIN: f64 = 16.0;
 
 /// Writes from top to bottom.
 pub(super) struct Column<'c> {
@@ -18,9 +21,18 @@ pub(super) struct Column<'c> {
     /// Where the next thing begins.
     pub(super) y: f64,
     pub(super) bottom: f64,
+    /// Room after a sentence, px.
+    gap: f64,
 }
 
-impl Column<'_> {
+impl<'c> Column<'c> {
+    /// The column of a panel, whose ground it draws.
+    pub(super) fn new(canvas: &'c mut Canvas, panel: &Area, gap: f64) -> Self {
+        canvas.area(panel, Some(Ink::WASH), None);
+        let (left, right) = (panel.least.x + MARGIN, panel.most.x - MARGIN);
+        Self { canvas, left, right, y: panel.least.y + 2.0, bottom: panel.most.y - 6.0, gap }
+    }
+
     pub(super) fn room(&self) -> f64 {
         self.right - self.left
     }
@@ -50,15 +62,28 @@ impl Column<'_> {
         self.sentence_above(words, ink, 0.0)
     }
 
+    /// Sentences as far as there is room; then how many are left out, with `where_else` they stand.
+    pub(super) fn sentences(&mut self, sentences: &[String], where_else: &str) {
+        for (index, sentence) in sentences.iter().enumerate() {
+            let left_over = sentences.len() - index;
+            // A line stays free for what is left over.
+            let free = if left_over == 1 { 0.0 } else { font::LEADING * SMALL };
+            if !self.sentence_above(sentence, Ink::TEXT, free) {
+                self.sentence(&format!("and {left_over} more{where_else}"), Ink::QUIET);
+                break;
+            }
+        }
+    }
+
     /// The same where so much room must stay free below.
-    pub(super) fn sentence_above(&mut self, words: &str, ink: Ink, free: f64) -> bool {
+    fn sentence_above(&mut self, words: &str, ink: Ink, free: f64) -> bool {
         let lines = font::lines(words, SMALL, self.room());
         let height = font::LEADING * SMALL * as_float(lines.len());
         if self.y + height + free > self.bottom {
             return false;
         }
         self.canvas.lines(&lines, Spot::new(self.left, self.y + SMALL), SMALL, ink);
-        self.y += height + 3.0;
+        self.y += height + self.gap;
         true
     }
 
