@@ -94,6 +94,17 @@ impl CaseReport {
         }
     }
 
+    /// Utilisation by the verification that decides; 0 without a load, `None` without an answer.
+    #[must_use]
+    pub fn utilisation(&self) -> Option<f64> {
+        match self.analyses {
+            Analyses::Unloaded => Some(0.0),
+            Analyses::Loaded { .. } => {
+                self.verification.as_ref().map(|verification| verification.utilisation)
+            }
+        }
+    }
+
     /// Strength by the ultimate method.
     #[must_use]
     pub fn ultimate_strength(&self, joint: &Joint) -> Option<Strength> {

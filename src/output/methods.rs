@@ -1,9 +1,9 @@
 //! The two methods side by side in words: one wording for the text and the drawing.
 
-use super::number::{MISSING, people, quantity, utilisation};
+use super::number::{MISSING, measure, people, quantity, utilisation};
 use crate::analysis::{CaseReport, Strength};
 use crate::model::{Basis, Joint};
-use crate::units::{Dimension, UnitSystem};
+use crate::units::UnitSystem;
 
 /// What each method says of a case; the ultimate method first.
 #[derive(Debug, Clone, PartialEq, Eq)]
@@ -59,9 +59,7 @@ impl Methods {
 
 /// A strength as the size of the load it stands for.
 fn resultant(case: &CaseReport, factor: Option<f64>, units: UnitSystem) -> String {
-    let shown = |(size, in_moment): (f64, bool)| {
-        quantity(units, if in_moment { Dimension::Moment } else { Dimension::Force }, size)
-    };
+    let shown = |(size, in_moment): (f64, bool)| quantity(units, measure(in_moment), size);
     factor.and_then(|factor| case.load_times(factor)).map_or_else(|| MISSING.to_owned(), shown)
 }
 

@@ -148,6 +148,11 @@ pub(super) fn quantity(units: UnitSystem, dimension: Dimension, value: f64) -> S
     format!("{} {}", people(units.shown(dimension, value)), units.symbol(dimension)).trim_end().to_owned()
 }
 
+/// The dimension of a strength, which is told as a force or as a moment.
+pub(super) fn measure(in_moment: bool) -> Dimension {
+    if in_moment { Dimension::Moment } else { Dimension::Force }
+}
+
 /// A length for people, without zeros at the end.
 pub(super) fn length(units: UnitSystem, value: f64) -> String {
     format!("{} {}", trimmed(units.shown(Dimension::Length, value)), units.symbol(Dimension::Length))

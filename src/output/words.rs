@@ -60,8 +60,8 @@ pub(super) fn confirmation(status: Confirmation) -> &'static str {
 }
 
 /// How the welds are integrated.
-pub(super) fn discretisation(joint: &Joint) -> String {
-    match joint.discretisation {
+pub(super) fn discretisation(discretisation: Discretisation) -> String {
+    match discretisation {
         Discretisation::Continuous => "continuous".to_owned(),
         Discretisation::Elements(1) => "1 mid-point element on the longest run".to_owned(),
         Discretisation::Elements(count) => format!("{count} mid-point elements on the longest run"),
@@ -135,7 +135,7 @@ pub(super) fn basis_in_brief(joint: &Joint) -> String {
 
 /// The law and how the welds are integrated, in brief.
 fn law_in_brief(joint: &Joint) -> String {
-    format!("{}, {}", joint.law.id, discretisation(joint))
+    format!("{}, {}", joint.law.id, discretisation(joint.discretisation))
 }
 
 /// The ratio of the two methods in words.

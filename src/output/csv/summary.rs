@@ -3,7 +3,7 @@
 //! Load factors and utilisations have no unit. `governing` is `yes` for the case that decides its joint.
 
 use super::{field, joint_labels, to_text};
-use crate::analysis::{Analyses, CaseReport, Report};
+use crate::analysis::{CaseReport, Report};
 use crate::output::names::{basis_name, status_name};
 use crate::output::number::{machine, rounded_up};
 use crate::solvers::Ultimate;
@@ -46,17 +46,13 @@ fn fields(report: &Report, case: &CaseReport, label: String, governing: bool) ->
     let (ultimate, elastic) = (case.ultimate_strength(joint), case.elastic_strength(joint));
     let state = case.ultimate().map(Ultimate::governing);
     let decided = case.verification.as_ref();
-    let utilisation = match case.analyses {
-        Analyses::Unloaded => Some(0.0),
-        Analyses::Loaded { .. } => decided.map(|verification| verification.utilisation),
-    };
     [
         label,
         case.name.clone(),
         status_name(case.status).to_owned(),
         decided.map(|verification| basis_name(verification.basis).to_owned()).unwrap_or_default(),
         decided.map(|verification| verification.check.clone()).unwrap_or_default(),
-        utilisation.map(|value| machine(rounded_up(value))).unwrap_or_default(),
+        case.utilisation().map(|value| machine(rounded_up(value))).unwrap_or_default(),
         field(ultimate.map(|strength| strength.load_factor)),
         field(ultimate.and_then(|strength| strength.design_load_factor)),
         field(case.ultimate().and_then(|answer| answer.peak_load_factor)),

@@ -1,9 +1,9 @@
 //! One load case as JSON.
 
-use super::value::{Number, Pair, Triple, Utilisation};
+use super::value::{Number, Pair, Triple, Utilisation, VerificationJson};
 use crate::analysis::{Analyses, CaseReport, Check};
 use crate::model::{Basis, Joint};
-use crate::output::names::{basis_name, confirmation_name, status_name, verdict_name};
+use crate::output::names::{confirmation_name, status_name, verdict_name};
 use crate::solvers::{ElasticPeak, NotSolved, Rupture, Ultimate};
 use serde::Serialize;
 
@@ -25,13 +25,6 @@ pub(super) struct CaseJson<'a> {
 struct LoadJson {
     force: Triple,
     moment_about_centroid: Triple,
-}
-
-#[derive(Serialize)]
-struct VerificationJson<'a> {
-    basis: Option<&'static str>,
-    check: Option<&'a str>,
-    utilisation: Option<Utilisation>,
 }
 
 #[derive(Serialize)]
@@ -121,7 +114,6 @@ fn weld_name(joint: &Joint, index: usize) -> Option<&str> {
 
 impl<'a> CaseJson<'a> {
     pub(super) fn new(case: &'a CaseReport, joint: &'a Joint) -> Self {
-        let decided = case.verification.as_ref();
         Self {
             case: &case.name,
             status: status_name(case.status),
@@ -129,11 +121,7 @@ impl<'a> CaseJson<'a> {
                 force: Triple::from(case.load.force),
                 moment_about_centroid: Triple::from(case.load.moment),
             },
-            verification: VerificationJson {
-                basis: decided.map(|verification| basis_name(verification.basis)),
-                check: decided.map(|verification| verification.check.as_str()),
-                utilisation: utilisation(case, decided.map(|verification| verification.utilisation)),
-            },
+            verification: VerificationJson::new(case.verification.as_ref(), case.utilisation()),
             ultimate: UltimateJson::new(case, joint),
             elastic: ElasticJson::new(case, joint),
             ultimate_over_elastic: case.ultimate_over_elastic().map(Number),

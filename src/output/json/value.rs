@@ -1,6 +1,8 @@
 //! JSON values: numbers of 12 significant digits, vectors, and the document as text.
 
+use crate::analysis::Verification;
 use crate::model::Vector;
+use crate::output::names::basis_name;
 use crate::output::number::{rounded, rounded_up};
 use serde::{Serialize, Serializer};
 
@@ -45,6 +47,25 @@ pub(in crate::output) struct Pair([Number; 2]);
 impl From<[f64; 2]> for Pair {
     fn from(values: [f64; 2]) -> Self {
         Self(values.map(Number))
+    }
+}
+
+/// What decides a case.
+#[derive(Serialize)]
+pub(in crate::output) struct VerificationJson<'a> {
+    basis: Option<&'static str>,
+    check: Option<&'a str>,
+    utilisation: Option<Utilisation>,
+}
+
+impl<'a> VerificationJson<'a> {
+    /// The verification that decides, and the utilisation: 0 without a load.
+    pub(in crate::output) fn new(decided: Option<&'a Verification>, utilisation: Option<f64>) -> Self {
+        Self {
+            basis: decided.map(|verification| basis_name(verification.basis)),
+            check: decided.map(|verification| verification.check.as_str()),
+            utilisation: utilisation.map(Utilisation),
+        }
     }
 }
 

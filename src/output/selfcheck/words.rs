@@ -1,8 +1,9 @@
 //! The words of the self-check: verdicts, shapes, quantities, tolerances.
 
-use crate::model::Discretisation;
+use crate::model::{Basis, Discretisation};
 use crate::output::layout::Emphasis;
 use crate::output::number::{count, share};
+use crate::output::words;
 use crate::study::selfcheck::{Allowance, Method, Outcome, PublishedCase, Quantity, Shape, Tolerance};
 
 /// The verdict on one value or on all.
@@ -17,18 +18,18 @@ pub(super) fn emphasis(passed: bool) -> Emphasis {
 
 /// The name of a method, as the text of `check` has it.
 pub(super) fn method(method: Method) -> &'static str {
-    match method {
-        Method::InstantaneousCentre => "instantaneous centre",
-        Method::Concentric => "concentric rule",
-        Method::Elastic => "elastic vector",
-    }
+    words::basis(match method {
+        Method::InstantaneousCentre => Basis::Ultimate,
+        Method::Concentric => Basis::Concentric,
+        Method::Elastic => Basis::Elastic,
+    })
 }
 
 /// How the welds are integrated.
 pub(super) fn discretisation(discretisation: Discretisation) -> String {
     match discretisation {
         Discretisation::Continuous => "continuous, no elements".to_owned(),
-        Discretisation::Elements(count) => format!("{count} mid-point elements on the longest run"),
+        Discretisation::Elements(_) => words::discretisation(discretisation),
     }
 }
 

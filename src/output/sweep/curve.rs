@@ -4,7 +4,7 @@ use super::labels::Labels;
 use crate::analysis::{Demand, Status};
 use crate::model::Basis;
 use crate::output::layout::{Emphasis, Layout};
-use crate::output::number::{MISSING, people, percent, quantity, utilisation};
+use crate::output::number::{self, MISSING, people, percent, quantity, utilisation};
 use crate::output::table::{Cell, Side, Table, clip, hanging};
 use crate::output::words;
 use crate::study::sweep::{Answer, Jump, PointCase, Sweep};
@@ -94,7 +94,7 @@ fn measure(sweep: &Sweep) -> Option<Dimension> {
 }
 
 fn dimension(demand: Demand) -> Dimension {
-    if demand.in_moment { Dimension::Moment } else { Dimension::Force }
+    number::measure(demand.in_moment)
 }
 
 fn row(

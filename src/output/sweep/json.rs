@@ -5,10 +5,9 @@
 
 use crate::analysis::Strength;
 use crate::diagnostic::Diagnostic;
-use crate::output::json::FaultJson;
-use crate::output::json::pretty;
-use crate::output::json::value::{Number, Pair, Utilisation};
-use crate::output::names::{basis_name, status_name};
+use crate::output::json::value::{Number, Pair, VerificationJson};
+use crate::output::json::{FaultJson, pretty};
+use crate::output::names::status_name;
 use crate::study::sweep::{Answer, Jump, Point, PointCase, Sweep, Variable};
 use serde::Serialize;
 
@@ -61,13 +60,6 @@ struct CaseJson<'a> {
     elastic: ElasticJson,
     ultimate_over_elastic: Option<Number>,
     not_solved: Option<&'a str>,
-}
-
-#[derive(Serialize)]
-struct VerificationJson<'a> {
-    basis: Option<&'static str>,
-    check: Option<&'a str>,
-    utilisation: Option<Utilisation>,
 }
 
 #[derive(Serialize)]
@@ -159,7 +151,6 @@ impl<'a> PointJson<'a> {
 
 impl<'a> CaseJson<'a> {
     fn new(case: &'a PointCase, name: &'a str) -> Self {
-        let decided = case.verification.as_ref();
         let (ultimate, elastic) = (case.ultimate, case.elastic);
         let factor = |strength: Option<Strength>| strength.map(|strength| Number(strength.load_factor));
         let design = |strength: Option<Strength>| strength.and_then(|s| s.design_load_factor).map(Number);
@@ -170,11 +161,7 @@ impl<'a> CaseJson<'a> {
             status: status_name(case.status),
             demand: case.demand.map(|demand| Number(demand.size)),
             in_moment: case.demand.map(|demand| demand.in_moment),
-            verification: VerificationJson {
-                basis: decided.map(|verification| basis_name(verification.basis)),
-                check: decided.map(|verification| verification.check.as_str()),
-                utilisation: case.utilisation().map(Utilisation),
-            },
+            verification: VerificationJson::new(case.verification.as_ref(), case.utilisation()),
             ultimate: UltimateJson {
                 load_factor: factor(ultimate),
                 design_load_factor: design(ultimate),

@@ -4,7 +4,7 @@ use crate::analysis::{Analyses, CaseReport, Coefficients, Status};
 use crate::model::{Basis, Joint, Vector};
 use crate::output::layout::{Emphasis, Layout};
 use crate::output::methods::Methods;
-use crate::output::number::{MISSING, degrees, people, point, quantity, small, utilisation};
+use crate::output::number::{MISSING, degrees, measure, people, point, quantity, small, utilisation};
 use crate::output::table::{Cell, Side, Table, clip, hanging, labelled};
 use crate::output::words;
 use crate::solvers::{Place, Ultimate};
@@ -192,7 +192,7 @@ fn checks(case: &CaseReport, units: UnitSystem, layout: &Layout) -> String {
     // A satisfied case with an exceeded row: the code accepts the governing check in its place.
     let replaced = case.status == Status::Satisfied && exceeded_row;
     for check in &case.checks {
-        let dimension = if check.in_moment { Dimension::Moment } else { Dimension::Force };
+        let dimension = measure(check.in_moment);
         let missing = || MISSING.to_owned();
         let exceeded = check.accepted && !check.satisfied;
         let verdict = match (check.accepted, check.satisfied) {

@@ -67,7 +67,12 @@ fn law(joint: &Joint) -> String {
         (_, Confirmation::Read) => "",
         (_, Confirmation::Recalled) => "; coefficients recalled",
     };
-    format!("{} ({}); {}{recalled}", joint.law.title, joint.law.id, words::discretisation(joint))
+    format!(
+        "{} ({}); {}{recalled}",
+        joint.law.title,
+        joint.law.id,
+        words::discretisation(joint.discretisation)
+    )
 }
 
 fn design_factor(factor: &DesignFactor) -> String {

@@ -7,6 +7,7 @@ use super::super::ink::Ink;
 use super::plot::Mark;
 use crate::analysis::Status;
 use crate::model::Basis;
+use crate::output::number;
 use crate::output::sweep::labels::Labels;
 use crate::output::sweep::summary;
 use crate::output::words;
@@ -62,7 +63,7 @@ pub(super) fn utilisation(sweep: &Sweep) -> &'static str {
 
 /// The dimension of the strengths that are drawn.
 pub(super) fn measure(sweep: &Sweep) -> Dimension {
-    if sweep.in_moment() { Dimension::Moment } else { Dimension::Force }
+    number::measure(sweep.in_moment())
 }
 
 /// A strength of the shown case at a point in the unit of the drawing; `None` where it has the other measure.
